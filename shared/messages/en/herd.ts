@@ -1,0 +1,1 @@
+export const herd = {} as const;

@@ -1,0 +1,1 @@
+export const medicines = {} as const;

@@ -1,0 +1,1 @@
+export const protocols = {} as const;
