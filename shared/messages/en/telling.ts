@@ -1,1 +1,37 @@
-export const telling = {} as const;
+/** Words of mails and calendar entries. */
+export const telling = {
+  'telling.tasks': '{count, plural, one {# task} other {# tasks}}',
+  'telling.head': '{count, plural, one {# head} other {# head}}',
+  'telling.taskLine': '{time} {title} · {group} · {head}',
+  'telling.undone': '{count} of {head} head not done',
+  'telling.window': 'Window {from} to {to}',
+  'telling.since': '{duration} from the timing anchor',
+  'telling.dose': '{what} {amount} {unit} a head, {route}',
+  'telling.doseVaries': '{what}, amount by head, {route}',
+  'telling.doseTotal': '{dose} · {total} {unit} in all',
+  'telling.cancelledEntry': 'Cancelled: {title}',
+  'telling.movedEntry': 'Moved here from {from}',
+  'telling.open': 'Open the task',
+  'telling.openApp': 'Open Yardbell',
+  'telling.calendarName': 'Yardbell · {label}',
+
+  'telling.evening.subject': '{day}: {what} at {property}',
+  'telling.evening.lead': 'Planned for {day} at {property}. All times are {zone}.',
+  'telling.morning.subject': 'Due {day}: {what} at {property}',
+  'telling.morning.lead': 'Not done yet on {day} at {property}. All times are {zone}.',
+  'telling.closing.subject': 'Window closes {time}: {title}, {undone} head not done at {property}',
+  'telling.closing.lead': '{title} for {group} closes at {time} ({zone}), {day}.',
+  'telling.reminder.foot':
+    'You get this because reminders are on in your settings. Change them, or turn them off, under More: {link}',
+
+  'telling.invitation.subject': '{invitedBy} invites you to {place} on Yardbell',
+  'telling.invitation.lead': '{invitedBy} has invited you to {place}. Open the link to accept. It works once.',
+  'telling.invitation.action': 'Accept the invitation',
+  'telling.invitation.foot': 'If you expected no invitation, leave this mail alone: nothing happens.',
+  'telling.invitation.someone': 'A manager',
+  'telling.invitation.somewhere': 'a property',
+  'telling.passwordReset.subject': 'Set a new Yardbell password',
+  'telling.passwordReset.lead': 'Open the link to set a new password. It works once, and signs you out everywhere.',
+  'telling.passwordReset.action': 'Set a new password',
+  'telling.passwordReset.foot': 'If you did not ask for this, leave this mail alone: your password stays as it is.',
+} as const;

@@ -79,6 +79,7 @@ export const trade = {
   'caution.hcg': 'Wear gloves. If you inject yourself, see a doctor and take the label.',
   'caution.device': 'Wear gloves. Keep removed devices in a closed container for lawful disposal.',
   'caution.melengestrol': 'Not for adult cows. Mix as the label says; wear gloves and a mask.',
-  'caution.service': 'Liquid nitrogen burns and takes the air: goggles, gloves, open doors. Never carry a tank in the cab.',
+  'caution.service':
+    'Liquid nitrogen burns and takes the air: goggles, gloves, open doors. Never carry a tank in the cab.',
   'caution.label': 'The label, local law and the treating vet decide.',
 } as const;
