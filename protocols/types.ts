@@ -222,7 +222,8 @@ export interface ProtocolBody {
   name: string;
   /** One or two sentences: for whom and how. */
   summary: string;
-  family: 'gnrhDevice' | 'gnrh' | 'oestradiol' | 'prostaglandin' | 'progestagenFeed' | 'presynchronised' | 'naturalService';
+  family:
+    'gnrhDevice' | 'gnrh' | 'oestradiol' | 'prostaglandin' | 'progestagenFeed' | 'presynchronised' | 'naturalService';
   /** Which animals it suits. */
   classes: AnimalClass[];
   biology: 'taurus' | 'indicus' | 'any';
