@@ -43,7 +43,8 @@ export function day(at: number, zone: string, locale = 'en-AU', year = false): s
 }
 
 /** `Tue 6 Oct 07:00`. */
-export const dayClock = (at: number, zone: string, locale = 'en-AU'): string => `${day(at, zone, locale)} ${clock(at, zone)}`;
+export const dayClock = (at: number, zone: string, locale = 'en-AU'): string =>
+  `${day(at, zone, locale)} ${clock(at, zone)}`;
 
 /** Short name of the zone at that moment, such as `AEDT` or `GMT+11`. */
 export const zoneName = (at: number, zone: string, locale = 'en-AU'): string =>

@@ -104,7 +104,11 @@ export const importPreview = z.object({
   mapping: z.record(z.string(), importField.nullable()),
   /** What must be answered before it can commit. */
   questions: z.array(
-    z.object({ kind: z.enum(['dateOrder', 'missingColumn', 'defaultClass']), message: z.string(), columns: z.array(z.string()) }),
+    z.object({
+      kind: z.enum(['dateOrder', 'missingColumn', 'defaultClass']),
+      message: z.string(),
+      columns: z.array(z.string()),
+    }),
   ),
   counts: z.object({ create: z.number(), update: z.number(), skip: z.number(), refuse: z.number() }),
   rows: z.array(importRow),

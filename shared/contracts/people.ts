@@ -56,7 +56,13 @@ export const property = z.object({
   milkings: z.array(clockTime),
   weekendDays: z.array(z.number().int().min(1).max(7)),
   engagements: z.array(
-    z.object({ organisationId: id, organisation: z.string(), scope: z.string(), from: z.string(), to: z.string().nullable() }),
+    z.object({
+      organisationId: id,
+      organisation: z.string(),
+      scope: z.string(),
+      from: z.string(),
+      to: z.string().nullable(),
+    }),
   ),
 });
 export const propertyPatch = z.object({

@@ -1,7 +1,18 @@
 import { z } from 'zod';
 
 import { animalClasses, type ProtocolBody } from '@/protocols/types';
-import { active, administrationRoute, animalClass, clockTime, doseUnit, finding, id, instant, name, stepKind } from './common';
+import {
+  active,
+  administrationRoute,
+  animalClass,
+  clockTime,
+  doseUnit,
+  finding,
+  id,
+  instant,
+  name,
+  stepKind,
+} from './common';
 
 const key = z
   .string()
@@ -32,7 +43,10 @@ const item = z.strictObject({
   route: administrationRoute,
   site: text.optional(),
   withholding: z
-    .strictObject({ meatDays: z.number().min(0).max(400).optional(), milkHours: z.number().min(0).max(4000).optional() })
+    .strictObject({
+      meatDays: z.number().min(0).max(400).optional(),
+      milkHours: z.number().min(0).max(4000).optional(),
+    })
     .optional(),
 });
 
@@ -95,7 +109,10 @@ export const protocolBody = z.strictObject({
       z.strictObject({
         id: key,
         label: name,
-        values: z.array(z.strictObject({ id: key, label: name })).min(2).max(6),
+        values: z
+          .array(z.strictObject({ id: key, label: name }))
+          .min(2)
+          .max(6),
         default: key,
       }),
     )
@@ -105,7 +122,10 @@ export const protocolBody = z.strictObject({
       z.strictObject({
         id: key,
         label: name,
-        results: z.array(z.strictObject({ id: key, label: name })).min(2).max(4),
+        results: z
+          .array(z.strictObject({ id: key, label: name }))
+          .min(2)
+          .max(4),
         onUnknown: key,
       }),
     )
@@ -145,7 +165,9 @@ export const protocolBody = z.strictObject({
   serviceStep: key,
   exits: z.array(z.enum(['servedEarly', 'pregnant', 'withdrawn'])),
   next: z
-    .array(z.strictObject({ outcome: z.enum(['open', 'pregnant']), library: z.string().max(80).optional(), note: text }))
+    .array(
+      z.strictObject({ outcome: z.enum(['open', 'pregnant']), library: z.string().max(80).optional(), note: text }),
+    )
     .optional(),
   lateChoices: z.record(key, text).optional(),
   sources: z

@@ -6,7 +6,16 @@ import { task } from './cohorts';
 /** done: given; notDone: could not be done (reason); lost: device found missing; withdrawn: leaves the program. */
 export const outcomes = ['done', 'notDone', 'lost', 'withdrawn'] as const;
 export const outcome = z.enum(outcomes);
-export const reasons = ['absent', 'sick', 'deviceMissing', 'refusedByCrew', 'servedEarly', 'pregnant', 'injured', 'other'] as const;
+export const reasons = [
+  'absent',
+  'sick',
+  'deviceMissing',
+  'refusedByCrew',
+  'servedEarly',
+  'pregnant',
+  'injured',
+  'other',
+] as const;
 
 /** One act on one animal (or on a number of head without ids) in one task. Client-made id: a repeat changes nothing. */
 export const recordInput = z.object({
@@ -17,7 +26,10 @@ export const recordInput = z.object({
   outcome,
   reason: z.enum(reasons).optional(),
   /** Steps of the visit with another outcome than the act's own. */
-  exceptions: z.array(z.object({ stepId: z.string(), outcome, reason: z.enum(reasons).optional() })).max(10).optional(),
+  exceptions: z
+    .array(z.object({ stepId: z.string(), outcome, reason: z.enum(reasons).optional() }))
+    .max(10)
+    .optional(),
   /** What was seen, by observation id. */
   observed: z.record(z.string(), z.string()).optional(),
   /** When it was done, by the phone's clock. */
@@ -94,4 +106,7 @@ export const today = z.object({
 });
 export type Today = z.infer<typeof today>;
 export const calendarQuery = z.object({ from: localDate, to: localDate, propertyId: id.optional() });
-export const calendar = z.object({ tasks: z.array(task), holidays: z.array(z.object({ propertyId: id, date: localDate, name: z.string() })) });
+export const calendar = z.object({
+  tasks: z.array(task),
+  holidays: z.array(z.object({ propertyId: id, date: localDate, name: z.string() })),
+});

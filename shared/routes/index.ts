@@ -27,4 +27,6 @@ export interface CallInput<R extends RouteName> {
   body: Given<Routes[R], 'body'>;
 }
 /** JSON answer; routes that answer with another media type have `string`. */
-export type Output<R extends RouteName> = Routes[R]['output'] extends z.ZodType ? z.output<Routes[R]['output']> : string;
+export type Output<R extends RouteName> = Routes[R]['output'] extends z.ZodType
+  ? z.output<Routes[R]['output']>
+  : string;

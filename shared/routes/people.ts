@@ -12,7 +12,11 @@ export const peopleRoutes = part({
     who: 'anyone',
     output: z.object({ ok: z.boolean(), database: z.boolean(), time: c.instant }),
   },
-  'GET /api/openapi.json': { summary: 'This interface as OpenAPI 3.1', who: 'anyone', output: { media: 'application/json' } },
+  'GET /api/openapi.json': {
+    summary: 'This interface as OpenAPI 3.1',
+    who: 'anyone',
+    output: { media: 'application/json' },
+  },
   'POST /api/session': { summary: 'Sign in', who: 'anyone', limit: 'auth', body: p.signIn, output: p.me },
   'DELETE /api/session': { summary: 'Sign out', who: 'anyone', output: c.ok },
   'GET /api/me': { summary: 'The person signed in, with places and abilities', who: 'signedIn', output: p.me },

@@ -2,8 +2,10 @@ import { cohorts } from './cohorts';
 import { common } from './common';
 import { findings } from './findings';
 import { herd } from './herd';
+import { http } from './http';
 import { medicines } from './medicines';
 import { people } from './people';
+import { peopleAudit } from './peopleAudit';
 import { protocols } from './protocols';
 import { server } from './server';
 import { telling } from './telling';
@@ -23,4 +25,6 @@ export const en = {
   ...today,
   ...telling,
   ...server,
+  ...http,
+  ...peopleAudit,
 } as const;

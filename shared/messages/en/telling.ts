@@ -21,6 +21,10 @@ export const telling = {
   'telling.morning.lead': 'Not done yet on {day} at {property}. All times are {zone}.',
   'telling.closing.subject': 'Window closes {time}: {title}, {undone} head not done at {property}',
   'telling.closing.lead': '{title} for {group} closes at {time} ({zone}), {day}.',
+  'telling.moved.subject': 'Moved to {now}: {title} · {group} at {property}',
+  'telling.moved.lead': 'You were told {was}. It is now {now}.',
+  'telling.cancelled.subject': 'Cancelled: {title} · {group} at {property}, {was}',
+  'telling.cancelled.lead': 'You were told {was}. It will not take place.',
   'telling.reminder.foot':
     'You get this because reminders are on in your settings. Change them, or turn them off, under More: {link}',
 

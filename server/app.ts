@@ -1,0 +1,77 @@
+import { randomUUID } from 'node:crypto';
+
+import compression from 'compression';
+import express, { type Express } from 'express';
+import helmet from 'helmet';
+import { pinoHttp } from 'pino-http';
+
+import { createLucia } from './auth/sessions';
+import type { Deps } from './deps';
+import { sameSite } from './http/csrf';
+import { errorHandler, failure } from './http/errors';
+import { register } from './http/register';
+import { serveApp } from './http/static';
+import { handlers } from './routes';
+
+/** style-src needs inline: react-native-web and expo-font write their style elements by script. */
+const contentSecurityPolicy = {
+  useDefaults: false,
+  directives: {
+    defaultSrc: ["'self'"],
+    scriptSrc: ["'self'"],
+    styleSrc: ["'self'", "'unsafe-inline'"],
+    imgSrc: ["'self'", 'data:', 'blob:'],
+    fontSrc: ["'self'", 'data:'],
+    connectSrc: ["'self'"],
+    workerSrc: ["'self'"],
+    manifestSrc: ["'self'"],
+    objectSrc: ["'none'"],
+    baseUri: ["'self'"],
+    formAction: ["'self'"],
+    frameAncestors: ["'none'"],
+  },
+};
+
+/** Secrets stand in some paths (calendar links, resets, invitations): the log shows the path without them. */
+export const withoutSecrets = (url: string): string =>
+  url.replace(/(\/(?:api\/)?(?:calendar|password-resets|invitations|reset|invitation)\/)[^/?#]+/, '$1…');
+
+/** The whole server as an Express application; nothing listens yet. */
+export function createApp(deps: Deps): Express {
+  const { env } = deps;
+  const app = express();
+  app.disable('x-powered-by');
+  app.set('trust proxy', env.TRUST_PROXY);
+  app.use(
+    pinoHttp({
+      logger: deps.log,
+      genReqId: () => randomUUID(),
+      autoLogging: env.NODE_ENV !== 'test',
+      serializers: {
+        req: (req: { id: string; method: string; url: string }) => ({
+          id: req.id,
+          method: req.method,
+          url: withoutSecrets(req.url),
+        }),
+        res: (res: { statusCode: number }) => ({ status: res.statusCode }),
+      },
+    }),
+  );
+  app.use(
+    helmet({
+      contentSecurityPolicy,
+      strictTransportSecurity: env.NODE_ENV === 'production',
+      referrerPolicy: { policy: 'no-referrer' },
+    }),
+  );
+  app.use(compression());
+  app.use(sameSite(env.PUBLIC_URL));
+  register(app, deps, createLucia(deps.pool, env.NODE_ENV === 'production'), handlers);
+  app.use('/api', (_req, _res, next) => next(failure('notFound', 'server.noSuchRoute')));
+  serveApp(app, env.DIST_DIR);
+  app.use((_req, res) => {
+    res.status(404).type('text').send('Not found');
+  });
+  app.use(errorHandler);
+  return app;
+}

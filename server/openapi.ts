@@ -1,0 +1,77 @@
+import { z } from 'zod';
+
+import { apiError } from '@/shared/contracts/common';
+import { routes } from '@/shared/routes';
+import type { RouteSpec, Who } from '@/shared/routes/spec';
+
+type Json = Record<string, unknown>;
+
+const schemaOf = (schema: z.ZodType, io: 'input' | 'output'): Json => {
+  const { $schema: _, ...rest } = z.toJSONSchema(schema, {
+    io,
+    unrepresentable: 'any',
+    target: 'draft-2020-12',
+  }) as Json;
+  return rest;
+};
+
+const whoWords = (who: Who): string =>
+  typeof who === 'string'
+    ? who
+    : `${who.ability}, judged at ${who.at === 'all' ? 'every place of the person' : who.at}`;
+
+function parametersOf(spec: RouteSpec): Json[] {
+  const list = (schema: z.ZodType | undefined, place: 'path' | 'query'): Json[] => {
+    if (!schema) return [];
+    const json = schemaOf(schema, 'input') as { properties?: Record<string, Json>; required?: string[] };
+    return Object.entries(json.properties ?? {}).map(([name, property]) => ({
+      name,
+      in: place,
+      required: place === 'path' || (json.required ?? []).includes(name),
+      schema: property,
+    }));
+  };
+  return [...list(spec.params, 'path'), ...list(spec.query, 'query')];
+}
+
+function operation(name: string, spec: RouteSpec): Json {
+  const json = (schema: Json) => ({ 'application/json': { schema } });
+  const content = 'media' in spec.output ? { [spec.output.media]: {} } : json(schemaOf(spec.output, 'output'));
+  return {
+    operationId: name.replace(/[^A-Za-z0-9]+/g, '_'),
+    summary: spec.summary,
+    description: `Who may: ${whoWords(spec.who)}.`,
+    parameters: parametersOf(spec),
+    ...(spec.body ? { requestBody: { required: true, content: json(schemaOf(spec.body, 'input')) } } : {}),
+    responses: {
+      [String(spec.status ?? 200)]: { description: 'Done', content },
+      default: { description: 'Not done, and why', content: json({ $ref: '#/components/schemas/Error' }) },
+    },
+    ...(spec.who === 'anyone' ? { security: [] } : {}),
+  };
+}
+
+/** The interface as an OpenAPI 3.1 document (OpenAPI Initiative, 2021), made from the route table. */
+export function openApi(url: string): Json {
+  const paths: Record<string, Json> = {};
+  for (const [name, spec] of Object.entries(routes) as [string, RouteSpec][]) {
+    const [method = '', path = ''] = name.split(' ');
+    const templated = path.replace(/:(\w+)/g, '{$1}');
+    paths[templated] = { ...paths[templated], [method.toLowerCase()]: operation(name, spec) };
+  }
+  return {
+    openapi: '3.1.0',
+    info: {
+      title: 'Yardbell',
+      version: '0.1.0',
+      description: 'Plans and runs oestrus-synchronisation programs in cattle.',
+    },
+    servers: [{ url }],
+    security: [{ session: [] }],
+    paths,
+    components: {
+      securitySchemes: { session: { type: 'apiKey', in: 'cookie', name: 'yardbell' } },
+      schemas: { Error: schemaOf(apiError, 'output') },
+    },
+  };
+}

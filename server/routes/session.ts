@@ -1,0 +1,80 @@
+import type { Response } from 'express';
+
+import { acceptInvitation, askPasswordReset, openInvitation, resetPassword } from '../commands/account';
+import { checkPassword } from '../auth/password';
+import { createLucia } from '../auth/sessions';
+import type { Deps } from '../deps';
+import { failure } from '../http/errors';
+import type { Handlers } from '../http/handler';
+import { Organisation, Property, User } from '../models';
+import { loadActor } from '../policies/loadActor';
+import { readMe } from '../queries/me';
+import { withinTries } from './tries';
+
+const sessionsOf = (deps: Deps) => createLucia(deps.pool, deps.env.NODE_ENV === 'production');
+
+/** Opens a session for a person and answers what they may see. */
+async function begin(deps: Deps, res: Response, user: User) {
+  const sessions = sessionsOf(deps);
+  const session = await sessions.createSession(user.id, {});
+  res.append('Set-Cookie', sessions.createSessionCookie(session.id).serialize());
+  const actor = await loadActor(deps.pool, { id: user.id, name: user.name, email: user.email }, deps.now());
+  return readMe(deps.pool, actor);
+}
+
+/** Signing in and out, forgotten passwords, invitations. */
+export const sessionHandlers: Handlers<
+  | 'POST /api/session'
+  | 'DELETE /api/session'
+  | 'POST /api/password-resets'
+  | 'POST /api/password-resets/:token'
+  | 'GET /api/invitations/:token'
+  | 'POST /api/invitations/:token'
+> = {
+  'POST /api/session': async ({ input, deps, res }) => {
+    const { email, password } = input.body;
+    withinTries(email, deps.now());
+    const user = await User.findOne({ where: { email } });
+    const fits = await checkPassword(user?.passwordHash ?? null, password);
+    if (!user || !fits) throw failure('unauthenticated', 'server.badCredentials');
+    return begin(deps, res, user);
+  },
+  'DELETE /api/session': async ({ deps, req, res }) => {
+    const sessions = sessionsOf(deps);
+    const id = sessions.readSessionCookie(req.headers.cookie ?? '');
+    if (id) await sessions.invalidateSession(id);
+    res.append('Set-Cookie', sessions.createBlankSessionCookie().serialize());
+    return { ok: true };
+  },
+  'POST /api/password-resets': async ({ input, deps }) => {
+    await askPasswordReset(deps, input.body.email);
+    return { ok: true };
+  },
+  'POST /api/password-resets/:token': async ({ input, deps }) => {
+    const userId = await resetPassword(deps, input.params.token, input.body.password);
+    await sessionsOf(deps).invalidateUserSessions(userId);
+    return { ok: true };
+  },
+  'GET /api/invitations/:token': async ({ input, deps }) => {
+    const invitation = await openInvitation(deps, input.params.token);
+    const [place, by, known] = await Promise.all([
+      invitation.propertyId
+        ? Property.findByPk(invitation.propertyId)
+        : Organisation.findByPk(invitation.organisationId ?? ''),
+      User.findByPk(invitation.invitedBy),
+      User.findOne({ where: { email: invitation.email } }),
+    ]);
+    return {
+      email: invitation.email,
+      role: invitation.role,
+      place: place?.name ?? '',
+      invitedBy: by?.name ?? '',
+      known: known !== null,
+    };
+  },
+  'POST /api/invitations/:token': async ({ input, deps, res }) => {
+    const { name, password } = input.body;
+    const user = await acceptInvitation(deps, input.params.token, { password, ...(name ? { name } : {}) });
+    return begin(deps, res, user);
+  },
+};

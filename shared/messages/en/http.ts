@@ -1,0 +1,25 @@
+/** What every request may be answered with, and the sentences of signing in. */
+export const http = {
+  'server.invalid': 'Something in the request is not right. Look at the fields named.',
+  'server.unknownField': 'There is no such field.',
+  'server.tooLarge': 'That is larger than the server takes.',
+  'server.notJson': 'The request is not JSON.',
+  'server.wrongType': 'Send application/json.',
+  'server.crossSite': 'This request came from another site.',
+  'server.databaseDown': 'The database does not answer. Nothing was changed. Try again in a moment.',
+  'server.alreadyThere': 'That is there already.',
+  'server.notFound': 'There is no such thing here, or you were not given it.',
+  'server.unexpected':
+    'Something went wrong on the server. Nothing was changed. Try again; if it stays, tell us the request number.',
+  'server.signIn': 'Sign in first.',
+  'server.forbidden': 'Your role does not allow that here.',
+  'server.tooMany': 'Too many tries. Wait a minute, then try again.',
+  'server.badCredentials': 'That e-mail address and password do not go together.',
+  'server.badToken': 'This link is not valid any more. Ask for a new one.',
+  'server.invitationUsed': 'This invitation was used, withdrawn or has expired. Ask the manager for a new one.',
+  'server.invitationName': 'Write your name.',
+  'server.invitationPassword': 'This e-mail address has an account: use its password.',
+  'server.alreadyMember': 'That person has this role here already.',
+  'server.lastManager': 'A property needs a manager. Invite another one first.',
+  'server.noSuchRoute': 'There is no such address in this interface.',
+} as const;
