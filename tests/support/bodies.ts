@@ -11,7 +11,14 @@ export const step = (id: string, kind: Step['kind'], visit: string, more: Partia
   ...more,
 });
 
-export const hours = (from: string, to: string, least: number, ideal: number, most: number, more: Partial<Gap> = {}): Gap => ({
+export const hours = (
+  from: string,
+  to: string,
+  least: number,
+  ideal: number,
+  most: number,
+  more: Partial<Gap> = {},
+): Gap => ({
   id: `${from}-${to}`,
   from,
   to,

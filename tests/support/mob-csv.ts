@@ -89,9 +89,7 @@ export const writeCsv = (cells: string[][], delimiter = ','): string =>
   cells
     .map((row) =>
       row
-        .map((cell) =>
-          cell.includes(delimiter) || /["\n\r]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell,
-        )
+        .map((cell) => (cell.includes(delimiter) || /["\n\r]/.test(cell) ? `"${cell.replaceAll('"', '""')}"` : cell))
         .join(delimiter),
     )
     .join('\r\n') + '\r\n';

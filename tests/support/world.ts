@@ -41,7 +41,12 @@ export async function buildWorld(): Promise<World> {
   const password = 'correct horse battery';
   const passwordHash = await hashPassword(password);
   const user = (name: string) =>
-    User.create({ id: randomUUID(), name, email: `${name.toLowerCase().replace(/\W+/g, '.')}@yard.example`, passwordHash });
+    User.create({
+      id: randomUUID(),
+      name,
+      email: `${name.toLowerCase().replace(/\W+/g, '.')}@yard.example`,
+      passwordHash,
+    });
   const member = (who: User, role: Role, where: { organisationId?: string; propertyId?: string }) =>
     Membership.create({ id: randomUUID(), userId: who.id, role, organisationId: null, propertyId: null, ...where });
   const practice = await organisation('Test Vets', 'vetPractice');
@@ -63,13 +68,26 @@ export async function buildWorld(): Promise<World> {
   };
   await member(people.vet, 'vet', { organisationId: practice.id });
   await member(people.technician, 'technician', { organisationId: contractor.id });
-  for (const role of ['manager', 'staff', 'calendarOnly'] as const) await member(people[role], role, { propertyId: property.id });
+  for (const role of ['manager', 'staff', 'calendarOnly'] as const)
+    await member(people[role], role, { propertyId: property.id });
   const otherVet = await user('Other Vet');
   await member(otherVet, 'vet', { organisationId: otherPractice.id });
   const otherManager = await user('Other Manager');
   await member(otherManager, 'manager', { propertyId: foreign.id });
   const stranger = await user('Stranger');
-  return { password, practice, otherPractice, contractor, property, second, foreign, people, otherVet, otherManager, stranger };
+  return {
+    password,
+    practice,
+    otherPractice,
+    contractor,
+    property,
+    second,
+    foreign,
+    people,
+    otherVet,
+    otherManager,
+    stranger,
+  };
 }
 
 export type Agent = ReturnType<typeof request.agent>;

@@ -80,7 +80,10 @@ describe('the minimal network and the linear-programming solver', () => {
         const bounds = toBounds(raw);
         const [before, after] = [solve({ points, bounds: bounds.slice(0, -1) }), solve({ points, bounds })];
         if (!after.consistent) {
-          const sum = after.cycle.reduce((s, { bound, side }) => s + (side === 'most' ? (bound.most ?? NaN) : -(bound.least ?? NaN)), 0);
+          const sum = after.cycle.reduce(
+            (s, { bound, side }) => s + (side === 'most' ? (bound.most ?? NaN) : -(bound.least ?? NaN)),
+            0,
+          );
           expect(after.cycle.length).toBeGreaterThan(0);
           expect(sum).toBeLessThan(-epsilon);
           return;

@@ -9,7 +9,13 @@ import { between, solve } from '@/protocols/network/solve';
  * Every figure here is from memory. Minutes after 7:00. T1 John leaves, T2 John arrives, T3 Fred leaves, T4 Fred arrives.
  */
 const points = ['T0', 'T1', 'T2', 'T3', 'T4'];
-const bound = (from: string, to: string, least: number, most: number): Bound => ({ id: `${from}${to}`, from, to, least, most });
+const bound = (from: string, to: string, least: number, most: number): Bound => ({
+  id: `${from}${to}`,
+  from,
+  to,
+  least,
+  most,
+});
 const bounds = [
   bound('T0', 'T1', 10, 20),
   bound('T1', 'T2', 30, 40),

@@ -27,12 +27,18 @@ describe('expanding from the start', () => {
 
   it('gives each visit the window that its gaps leave after the earlier ones', () => {
     const { window } = visit(fixed(sevenDay(), 'in', '2026-05-04T08:00'), 'ai');
-    expect([toLocal(window.earliest, sydney), toLocal(window.latest, sydney)]).toEqual(['2026-05-13T12:00', '2026-05-13T16:00']);
+    expect([toLocal(window.earliest, sydney), toLocal(window.latest, sydney)]).toEqual([
+      '2026-05-13T12:00',
+      '2026-05-13T16:00',
+    ]);
   });
 
   it('gives the first visit the window in which the rest still holds as planned', () => {
     const { window } = visit(fixed(sevenDay(), 'in', '2026-05-04T08:00'), 'in');
-    expect([toLocal(window.earliest, sydney), toLocal(window.latest, sydney)]).toEqual(['2026-05-04T07:00', '2026-05-04T09:00']);
+    expect([toLocal(window.earliest, sydney), toLocal(window.latest, sydney)]).toEqual([
+      '2026-05-04T07:00',
+      '2026-05-04T09:00',
+    ]);
   });
 
   it('tightens a window by a gap that spans more than one visit', () => {
@@ -57,7 +63,12 @@ describe('a clock change inside a program', () => {
     expect(said).toHaveLength(1);
     expect(said[0]).toMatchObject({
       severity: 'note',
-      params: { changeAt: Date.UTC(2026, 9, 3, 16), shiftMinutes: 60, elapsedMinutes: 167 * 60, nominalMinutes: 168 * 60 },
+      params: {
+        changeAt: Date.UTC(2026, 9, 3, 16),
+        shiftMinutes: 60,
+        elapsedMinutes: 167 * 60,
+        nominalMinutes: 168 * 60,
+      },
     });
   });
 
@@ -83,11 +94,23 @@ describe('a clock change inside a program', () => {
 });
 
 describe('forwards and backwards', () => {
-  const zones = ['Australia/Sydney', 'Europe/Dublin', 'America/New_York', 'America/Sao_Paulo', 'Australia/Lord_Howe', 'Pacific/Auckland'];
+  const zones = [
+    'Australia/Sydney',
+    'Europe/Dublin',
+    'America/New_York',
+    'America/Sao_Paulo',
+    'Australia/Lord_Howe',
+    'Pacific/Auckland',
+  ];
   const protocol = fc
     .record({
       steps: fc.array(
-        fc.record({ days: fc.boolean(), n: fc.integer({ min: 1, max: 20 }), width: fc.integer({ min: 0, max: 6 }), from: fc.nat() }),
+        fc.record({
+          days: fc.boolean(),
+          n: fc.integer({ min: 1, max: 20 }),
+          width: fc.integer({ min: 0, max: 6 }),
+          from: fc.nat(),
+        }),
         { minLength: 1, maxLength: 7 },
       ),
     })
@@ -98,7 +121,9 @@ describe('forwards and backwards', () => {
         steps: ids.map((id) => step(id, 'other', `v${id}`)),
         gaps: steps.map((s, i) => {
           const from = `s${s.from % (i + 1)}`;
-          return s.days ? days(from, `s${i + 1}`, s.n, s.width * 30) : hours(from, `s${i + 1}`, s.n, s.n + s.width / 2, s.n + s.width);
+          return s.days
+            ? days(from, `s${i + 1}`, s.n, s.width * 30)
+            : hours(from, `s${i + 1}`, s.n, s.n + s.width / 2, s.n + s.width);
         }),
         timingAnchor: 's0',
         serviceStep: ids.at(-1) ?? 's0',
@@ -125,7 +150,9 @@ describe('forwards and backwards', () => {
         const other = there.visits[pick % there.visits.length];
         if (!other) return;
         const back = expand(b, { fix: { visit: other.visit, at: other.at }, zone });
-        expect(new Map(back.visits.map((v) => [v.visit, v.at]))).toEqual(new Map(there.visits.map((v) => [v.visit, v.at])));
+        expect(new Map(back.visits.map((v) => [v.visit, v.at]))).toEqual(
+          new Map(there.visits.map((v) => [v.visit, v.at])),
+        );
       }),
       { numRuns: 3000, seed: 7 },
     );
@@ -153,7 +180,11 @@ describe('forwards and backwards', () => {
 describe('what is done', () => {
   it('moves the window of what follows: devices out at 10:20, not at eight', () => {
     const late = at('2026-05-11T10:20');
-    const plan = expand(sevenDay(), { fix: { visit: 'in', at: at('2026-05-04T08:00') }, zone: sydney, done: { out: late } });
+    const plan = expand(sevenDay(), {
+      fix: { visit: 'in', at: at('2026-05-04T08:00') },
+      zone: sydney,
+      done: { out: late },
+    });
     expect(visit(plan, 'ai').window).toEqual({ earliest: late + 52 * 3_600_000, latest: late + 56 * 3_600_000 });
   });
 
@@ -190,7 +221,15 @@ describe('repeats and options', () => {
   it('take the chosen option, and the default when none is chosen', () => {
     const choice = sevenDay();
     choice.options = [
-      { id: 'second', label: 'Second prostaglandin', values: [{ id: 'h8', label: '8 h' }, { id: 'h24', label: '24 h' }], default: 'h8' },
+      {
+        id: 'second',
+        label: 'Second prostaglandin',
+        values: [
+          { id: 'h8', label: '8 h' },
+          { id: 'h24', label: '24 h' },
+        ],
+        default: 'h8',
+      },
     ];
     choice.visits.push({ id: 'pg2', label: 'Second', yarded: true });
     choice.steps.push(step('pg2', 'prostaglandin', 'pg2'));
