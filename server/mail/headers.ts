@@ -1,5 +1,7 @@
-/** Matches what could end a header line or hide in it: control characters and the Unicode line separators. */
-// eslint complains of control characters in literals, so the class is built from their numbers
+/**
+ * Whatever could end a header line or hide in it: control characters and the Unicode line separators. Written as text,
+ * because linters rightly distrust control characters in a literal.
+ */
 const breaks = new RegExp('[\\u0000-\\u001f\\u007f\\u0085\\u2028\\u2029]+', 'g');
 
 /**

@@ -39,14 +39,14 @@ const linkOf = (actor: Actor, propertyId: string | null = null, label = 'My phon
 
 describe('calendar entries', () => {
   let yard: Yard;
-  const zone = process.env['TZ'];
+  const zone = process.env.TZ;
   beforeAll(async () => {
     yard = await openYard('2026-03-20T00:00:00Z');
   });
   afterAll(() => yard.close());
   afterEach(() => {
-    if (zone === undefined) delete process.env['TZ'];
-    else process.env['TZ'] = zone;
+    if (zone === undefined) delete process.env.TZ;
+    else process.env.TZ = zone;
   });
 
   it.each(Object.entries(changes))(
@@ -63,7 +63,7 @@ describe('calendar entries', () => {
         ['Australia/Lord_Howe', -630],
         ['America/St_Johns', 210],
       ] as const) {
-        process.env['TZ'] = server;
+        process.env.TZ = server;
         expect(Math.abs(new Date('2026-06-30T00:00:00Z').getTimezoneOffset() - offset)).toBeLessThanOrEqual(60);
         const { text } = await readCalendar(yard.deps, linkOf(actor), actor);
         expect(brokenRules(text)).toEqual([]);

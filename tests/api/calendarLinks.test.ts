@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 
 import express from 'express';
 import request from 'supertest';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import { createLucia } from '@/server/auth/sessions';
 import { errorHandler } from '@/server/http/errors';
@@ -19,8 +19,12 @@ describe('calendar links', () => {
   let property: string;
   let task: string;
 
+  beforeAll(async () => {
+    yard = await openYard();
+  });
+  afterAll(() => yard.close());
   beforeEach(async () => {
-    yard = await openYard('2026-10-01T00:00:00Z');
+    await yard.reset('2026-10-01T00:00:00Z');
     app = express();
     // the routes under test are all here; the table's other routes are not called
     register(app, yard.deps, createLucia(yard.deps.pool, false), calendarLinkHandlers as Handlers<RouteName>);
@@ -28,7 +32,6 @@ describe('calendar links', () => {
     property = await addProperty(yard);
     task = await addTask(yard, property, await addGroup(yard, property), { due: '2026-10-05T20:00:00Z' });
   });
-  afterEach(() => yard.close());
 
   const signIn = async (userId: string) => {
     const sessions = createLucia(yard.deps.pool, false);

@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto';
 
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import { claimMessage, claimTurn } from '@/jobs/claim';
 import { begin, settleSent } from '@/jobs/settle';
@@ -30,13 +30,16 @@ describe('delivery', () => {
   let property: string;
   let task: string;
 
+  beforeAll(async () => {
+    yard = await openYard();
+  });
+  afterAll(() => yard.close());
   beforeEach(async () => {
-    yard = await openYard('2026-10-01T00:00:00Z');
+    await yard.reset('2026-10-01T00:00:00Z');
     mail = fakeMail();
     property = await addProperty(yard);
     task = await addTask(yard, property, await addGroup(yard, property), { due: DUE });
   });
-  afterEach(() => yard.close());
 
   const plan = () => yard.deps.sequelize.transaction((tx) => planReminders(yard.deps, tx, property, [task]));
   const people = async (count: number) => {

@@ -3,7 +3,7 @@ import { randomUUID } from 'node:crypto';
 import type { Deps } from '@/server/deps';
 import type { Mail, MailTransport } from '@/server/mail/transport';
 import type { JobContext } from '@/jobs/context';
-import { openTestDeps } from './database';
+import { freshDatabase } from '../support/fresh-database';
 
 /** A clock that tests move. */
 export interface Clock {
@@ -16,21 +16,31 @@ export interface Yard {
   deps: Deps;
   clock: Clock;
   sql(text: string, values?: Record<string, unknown>): Promise<Record<string, unknown>[]>;
+  /** Empties every table and sets the clock: a test file has one database, each test an empty one. */
+  reset(at: string): Promise<void>;
   close(): Promise<void>;
 }
 
+const tables = 'organisations, properties, users, invitations, protocols, messages, worker_beats, audit_entries';
+
 /** An empty database with the schema, and a clock in the test's hand. */
-export async function openYard(at: string): Promise<Yard> {
+export async function openYard(at = '2026-10-01T00:00:00Z'): Promise<Yard> {
   const clock: Clock = { at: new Date(at) };
-  const { url, deps, close } = await openTestDeps(() => clock.at);
+  const fresh = await freshDatabase();
+  const env = { ...fresh.deps.env, PUBLIC_URL: 'http://localhost:3000' };
+  const deps: Deps = { ...fresh.deps, env, now: () => clock.at };
   return {
-    url,
+    url: fresh.url,
     deps,
     clock,
-    close,
+    close: fresh.drop,
     async sql(text, values = {}) {
       const [rows] = await deps.sequelize.query(text, { replacements: values });
       return rows as Record<string, unknown>[];
+    },
+    async reset(moment) {
+      clock.at = new Date(moment);
+      await deps.sequelize.query(`truncate ${tables} cascade`);
     },
   };
 }

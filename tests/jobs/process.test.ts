@@ -1,7 +1,7 @@
 import { spawn, type ChildProcess } from 'node:child_process';
 import { once } from 'node:events';
 
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import { startScriptedSmtp } from '../server/mailServer';
 import { openYard, outbox, type Yard } from './kit';
@@ -11,12 +11,15 @@ const pause = (ms: number) => new Promise<void>((resolve) => setTimeout(resolve,
 describe('the worker as a process', () => {
   let yard: Yard;
   const running = new Set<ChildProcess>();
+  beforeAll(async () => {
+    yard = await openYard();
+  });
+  afterAll(() => yard.close());
   beforeEach(async () => {
-    yard = await openYard('2026-10-01T00:00:00Z');
+    await yard.reset('2026-10-01T00:00:00Z');
   });
   afterEach(async () => {
     for (const child of running) child.kill('SIGKILL');
-    await yard.close();
   });
 
   const start = (smtpUrl: string): ChildProcess => {

@@ -1,4 +1,4 @@
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import { sendMessages } from '@/jobs/tasks/sendMessages';
 import { planReminders } from '@/server/commands/planReminders';
@@ -10,10 +10,13 @@ const publicUrl = 'http://localhost:3000';
 
 describe('reminders through a real mail server', () => {
   let yard: Yard;
-  beforeEach(async () => {
-    yard = await openYard('2026-10-01T00:00:00Z');
+  beforeAll(async () => {
+    yard = await openYard();
   });
-  afterEach(() => yard.close());
+  afterAll(() => yard.close());
+  beforeEach(async () => {
+    await yard.reset('2026-10-01T00:00:00Z');
+  });
 
   const planOne = async (zone: string, locale: string, due: string) => {
     const property = await addProperty(yard, zone, 'Gully Flat\r\nBcc: thief@example.org', locale);

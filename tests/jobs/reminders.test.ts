@@ -1,4 +1,4 @@
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import { planAhead } from '@/jobs/tasks/planAhead';
 import { sendMessages } from '@/jobs/tasks/sendMessages';
@@ -27,13 +27,16 @@ describe('reminders', () => {
   let property: string;
   let group: Awaited<ReturnType<typeof addGroup>>;
 
+  beforeAll(async () => {
+    yard = await openYard();
+  });
+  afterAll(() => yard.close());
   beforeEach(async () => {
-    yard = await openYard('2026-10-01T00:00:00Z');
+    await yard.reset('2026-10-01T00:00:00Z');
     mail = fakeMail();
     property = await addProperty(yard);
     group = await addGroup(yard, property);
   });
-  afterEach(() => yard.close());
 
   const plan = (...taskIds: string[]) =>
     yard.deps.sequelize.transaction((tx) => planReminders(yard.deps, tx, property, taskIds));

@@ -1,4 +1,4 @@
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 
 import type { Job } from '@/jobs/schedule';
 import { expression, startWorker } from '@/jobs/worker';
@@ -9,10 +9,13 @@ const pause = (ms: number) => new Promise<void>((resolve) => setTimeout(resolve,
 
 describe('worker', () => {
   let yard: Yard;
-  beforeEach(async () => {
-    yard = await openYard('2026-10-05T06:00:00Z');
+  beforeAll(async () => {
+    yard = await openYard();
   });
-  afterEach(() => yard.close());
+  afterAll(() => yard.close());
+  beforeEach(async () => {
+    await yard.reset('2026-10-05T06:00:00Z');
+  });
 
   const planned = async (people: number) => {
     const property = await addProperty(yard);

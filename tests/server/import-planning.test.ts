@@ -134,7 +134,9 @@ describe('columns', () => {
   });
 
   it('leaves out what was left out, and never reads headings as properties of an object', () => {
-    const found = plan('Tag,Class,Breed,constructor\n1,cow,Angus cross,x\n', { mapping: { Tag: 'tag', Class: 'class' } });
+    const found = plan('Tag,Class,Breed,constructor\n1,cow,Angus cross,x\n', {
+      mapping: { Tag: 'tag', Class: 'class' },
+    });
     expect(found.mapping).toEqual({ Tag: 'tag', Class: 'class', Breed: null, constructor: null });
     expect(found.rows[0]?.values).toEqual({ class: 'cow' });
   });
@@ -210,7 +212,9 @@ describe('beside the herd', () => {
   it('importing what an import made changes nothing', () => {
     const first = plan(mobCsv({ head: 186 }));
     const made = first.rows.map((row, i) => cow(`id${i}`, row.tag, { ...row.values }));
-    expect(plan(mobCsv({ head: 186, dates: 'dmy', delimiter: ';', decimalComma: true }), { herd: made }).counts).toEqual({
+    expect(
+      plan(mobCsv({ head: 186, dates: 'dmy', delimiter: ';', decimalComma: true }), { herd: made }).counts,
+    ).toEqual({
       create: 0,
       update: 0,
       skip: 186,

@@ -49,6 +49,7 @@ export const protocols = {
   'protocols.line': 'Gap line',
   'protocols.lineHint': 'To scale. Thick parts are windows.',
   'protocols.lineEditHint': 'Choose a visit and use the arrow keys, or drag it, to move it by whole hours or days.',
+  'protocols.moveVisit': 'Move {visit}',
   'protocols.lineTable': 'The line as a table',
   'protocols.day': 'Day {day}',
   'protocols.visit': 'Visit',
