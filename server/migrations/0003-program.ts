@@ -64,6 +64,8 @@ create table tasks (
   window_to timestamptz not null,
   zone text not null,
   since_anchor_minutes integer,
+  -- words for the step that the interval counts from
+  anchor_label text,
   steps jsonb not null,
   state text not null default 'planned' check (state in ('planned', 'inWork', 'done', 'cancelled')),
   moved_from timestamptz,

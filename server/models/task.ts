@@ -24,6 +24,7 @@ export class Task extends Model<InferAttributes<Task>, InferCreationAttributes<T
   declare windowTo: Date;
   declare zone: string;
   declare sinceAnchorMinutes: CreationOptional<number | null>;
+  declare anchorLabel: CreationOptional<string | null>;
   declare steps: TaskStep[];
   declare state: CreationOptional<'planned' | 'inWork' | 'done' | 'cancelled'>;
   declare movedFrom: CreationOptional<Date | null>;
@@ -47,6 +48,7 @@ export class Task extends Model<InferAttributes<Task>, InferCreationAttributes<T
         windowTo: column.instant(),
         zone: column.text(),
         sinceAnchorMinutes: column.integerOrNull(),
+        anchorLabel: column.textOrNull(),
         steps: column.json(),
         state: { ...column.text(), allowNull: true },
         movedFrom: column.instantOrNull(),

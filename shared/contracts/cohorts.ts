@@ -33,6 +33,17 @@ export const taskStep = z.object({
   level: z.enum(['animal', 'group']),
   /** Words for the branch, such as "not in heat by 66 h". */
   condition: z.string().nullable(),
+  /** The condition itself, for working out which steps an animal gets once it was looked at. */
+  when: z.unknown().optional(),
+  /** What this step looks at, when it is an observation. */
+  observation: z
+    .object({
+      id: z.string(),
+      label: z.string(),
+      results: z.array(z.object({ id: z.string(), label: z.string() })),
+      onUnknown: z.string(),
+    })
+    .optional(),
   doses: z.array(dose),
   /** Keys of the cautions that stand where the act is done. */
   cautions: z.array(z.string()),

@@ -91,7 +91,7 @@ describe('calendar entries', () => {
     expect(entry?.description).toContain('Cloprostenol 500 µg a head, into muscle · 30 mg in all');
     expect(entry?.description).toContain('Window Mon 6 Apr 05:00 AEST to 09:00 AEST');
     expect(entry?.description).toContain('Pregnant women and anyone with asthma');
-    expect(entry?.description).toContain('http://localhost:3000/tasks/');
+    expect(entry?.description).toContain('http://localhost:3000/task/');
   });
 
   it('follow a move: other time, higher sequence, same uid, new stamp', async () => {
@@ -144,7 +144,7 @@ describe('calendar entries', () => {
     const link = linkOf(contractor);
     expect(await uids(contractor, link)).toEqual([`${own}@yardbell`]);
     // the plan, and no door into the work
-    expect((await readCalendar(yard.deps, link, contractor)).text).not.toContain('/tasks/');
+    expect((await readCalendar(yard.deps, link, contractor)).text).not.toContain('/task/');
     // access lost: the same link, at once empty, whatever is kept of it
     expect(await uids(actorOf(), link)).toEqual([]);
     expect(await uids(contractor, linkOf(contractor, other))).toEqual([]);

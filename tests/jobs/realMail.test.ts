@@ -48,7 +48,7 @@ describe('reminders through a real mail server', () => {
         expect(one.text).toContain('07:00 Device out · Group 1 · 60 head');
         expect(one.text).toContain('Window Sun 25 Oct 05:00 GMT to 09:00 GMT');
         expect(one.text).toContain('Cloprostenol 500 µg a head, into muscle · 30 mg in all');
-        expect(one.html).toContain(`${publicUrl}/tasks/${task}`);
+        expect(one.html).toContain(`${publicUrl}/task/${task}`);
       }
     } finally {
       mail.close();
