@@ -87,7 +87,7 @@ async function directionOf(
 ): Promise<{ authorityNote: string | null; direction: string | null }> {
   const authorities = await authoritiesOf(deps, task.propertyId, task.cohortId);
   const today = localDate(deps.now().getTime(), task.zone);
-  const needed = [...new Set(task.steps.flatMap((step) => step.doses.map((dose) => dose.active)))].filter(
+  const needed: string[] = [...new Set(task.steps.flatMap((step) => step.doses.map((dose) => dose.active)))].filter(
     (a) => a !== 'heatAid',
   );
   const current = authorities.filter(
