@@ -84,7 +84,8 @@ export function useStartCohort(cohortId: string) {
 export function useCancelCohort(cohortId: string) {
   const refresh = useRefresh();
   return useMutation({
-    mutationFn: (reason: string) => call('POST /api/cohorts/:cohortId/cancel', { params: { cohortId }, body: { reason } }),
+    mutationFn: (reason: string) =>
+      call('POST /api/cohorts/:cohortId/cancel', { params: { cohortId }, body: { reason } }),
     onSuccess: refresh,
   });
 }

@@ -23,11 +23,15 @@ export function useMedicineActions(propertyId: string) {
     }),
     addBatch: useMutation({
       mutationFn: (body: Omit<CallInput<'POST /api/properties/:propertyId/product-batches'>['body'], 'id'>) =>
-        call('POST /api/properties/:propertyId/product-batches', { params: { propertyId }, body: { id: newId(), ...body } }),
+        call('POST /api/properties/:propertyId/product-batches', {
+          params: { propertyId },
+          body: { id: newId(), ...body },
+        }),
       onSuccess: refresh,
     }),
     withdraw: useMutation({
-      mutationFn: (authorityId: string) => call('POST /api/authorities/:authorityId/withdraw', { params: { authorityId } }),
+      mutationFn: (authorityId: string) =>
+        call('POST /api/authorities/:authorityId/withdraw', { params: { authorityId } }),
       onSuccess: refresh,
     }),
   };

@@ -15,7 +15,8 @@ export const useLibraryProtocol = (libraryId: string) =>
     staleTime: Infinity,
   });
 
-export const useProtocols = () => useQuery({ queryKey: keys.protocols(), queryFn: () => call('GET /api/protocols', {}) });
+export const useProtocols = () =>
+  useQuery({ queryKey: keys.protocols(), queryFn: () => call('GET /api/protocols', {}) });
 
 export const useProtocol = (protocolId: string) =>
   useQuery({

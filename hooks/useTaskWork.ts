@@ -3,7 +3,15 @@ import { useCallback, useEffect, useSyncExternalStore } from 'react';
 
 import { ApiFailure, call } from '@/lib/api';
 import { newId } from '@/lib/ids';
-import { flushOutbox, keep, loadOutbox, outboxEntries, subscribeOutbox, type OutboxEntry, type Send } from '@/lib/outbox';
+import {
+  flushOutbox,
+  keep,
+  loadOutbox,
+  outboxEntries,
+  subscribeOutbox,
+  type OutboxEntry,
+  type Send,
+} from '@/lib/outbox';
 import type { TaskWork } from '@/shared/contracts/work';
 import { keys } from './keys';
 import { useMe } from './useMe';
@@ -25,7 +33,10 @@ const isLater = (failure: ApiFailure): boolean =>
 const send: Send = async (entry) => {
   try {
     if (entry.kind === 'undo')
-      await call('POST /api/records/:recordId/undo', { params: { recordId: entry.recordId ?? '' }, body: entry.body as never });
+      await call('POST /api/records/:recordId/undo', {
+        params: { recordId: entry.recordId ?? '' },
+        body: entry.body as never,
+      });
     else if (entry.kind === 'rest')
       await call('POST /api/tasks/:taskId/rest', { params: { taskId: entry.taskId }, body: entry.body as never });
     else {
@@ -84,7 +95,10 @@ export interface NewRecord {
 /** Ways to record work: each resolves once the act is safely on this device, and then goes out. */
 export function useRecorder(task: TaskWork['task'] | undefined, flush: () => Promise<void>) {
   const userId = useMe().data?.user.id ?? '';
-  const put = async (part: Pick<OutboxEntry, 'kind' | 'body' | 'animalIds' | 'head'> & { recordId?: string }, at: string) => {
+  const put = async (
+    part: Pick<OutboxEntry, 'kind' | 'body' | 'animalIds' | 'head'> & { recordId?: string },
+    at: string,
+  ) => {
     await keep({ id: newId(), userId, taskId: task?.id ?? '', at, state: 'waiting', ...part });
     await flush();
   };
@@ -92,7 +106,10 @@ export function useRecorder(task: TaskWork['task'] | undefined, flush: () => Pro
     record: (record: NewRecord) => {
       const at = new Date().toISOString();
       const body = { records: [{ id: newId(), at, ...record }] };
-      return put({ kind: 'records', body, animalIds: record.animalId ? [record.animalId] : [], head: record.head ?? 1 }, at);
+      return put(
+        { kind: 'records', body, animalIds: record.animalId ? [record.animalId] : [], head: record.head ?? 1 },
+        at,
+      );
     },
     rest: (animalIds: string[], expectedHead: number, batchId: string | null) => {
       const at = new Date().toISOString();
