@@ -63,6 +63,8 @@ export function useSaveCohort(cohortId: string) {
     mutationFn: (body: CohortPatch) => call('PATCH /api/cohorts/:cohortId', { params: { cohortId }, body }),
     onSuccess: (cohort) => {
       client.setQueryData(keys.cohort(cohortId), cohort);
+      // the herd shows which animals are taken
+      void client.invalidateQueries({ queryKey: keys.herd() });
       return client.invalidateQueries({ queryKey: keys.cohortLists() });
     },
   });
@@ -78,6 +80,8 @@ export function useStartCohort(cohortId: string) {
       client.setQueryData(keys.cohort(cohortId), cohort);
       return refresh();
     },
+    // refused because the plan is another now: fetch that one, so that it can be looked at
+    onError: refresh,
   });
 }
 

@@ -28,6 +28,7 @@ export const useVersion = (versionId: string) =>
   useQuery({
     queryKey: keys.version(versionId),
     queryFn: () => call('GET /api/protocol-versions/:versionId', { params: { versionId } }),
+    enabled: versionId !== '',
   });
 
 /** Everything about protocols is asked for anew after a change: lists, versions and the planner's choice. */
