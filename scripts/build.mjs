@@ -1,5 +1,5 @@
 // Builds the page into dist/ and the server and worker into build/. `--if-changed` leaves the page alone when nothing that
-// it is made from has changed.
+// it is made from has changed; `--page` and `--server` build one of the two.
 import { spawn } from 'node:child_process';
 import { createHash } from 'node:crypto';
 import { once } from 'node:events';
@@ -9,12 +9,11 @@ import path from 'node:path';
 import { build } from 'esbuild';
 
 import { precompress } from './bundle/precompress.mjs';
-import { serviceWorker } from './bundle/serviceWorker.mjs';
 
 const root = path.resolve(import.meta.dirname, '..');
 process.chdir(root);
 
-const inputs = ['app', 'components', 'hooks', 'lib', 'shared', 'protocols', 'assets', 'public'];
+const inputs = ['app', 'components', 'hooks', 'lib', 'shared', 'protocols', 'assets', 'public', 'scripts/bundle'];
 const inputFiles = ['package-lock.json', 'app.json', 'metro.config.js', 'tsconfig.json', 'scripts/build.mjs'];
 const stamp = 'build/web-inputs.txt';
 const fresh = 'build/web-new';
@@ -65,6 +64,8 @@ async function buildPage() {
   if (!existsSync('expo-env.d.ts')) await expo('customize', 'tsconfig.json');
   rmSync(fresh, { recursive: true, force: true });
   await expo('export', '-p', 'web', '--output-dir', fresh);
+  // loaded only here: it takes longer than finding out that nothing has changed
+  const { serviceWorker } = await import('./bundle/serviceWorker.mjs');
   const precached = await serviceWorker(fresh);
   const sizes = await precompress(fresh);
   // the old page stays whole until the new one is: a build that is stopped half-way breaks nothing
@@ -86,7 +87,7 @@ function report(sizes, precached) {
 }
 
 async function buildServer() {
-  const entryPoints = ['server/index.ts', 'server/seeds/run.ts', 'jobs/index.ts'].filter((file) => existsSync(file));
+  const entryPoints = ['server/index.ts', 'server/seeds/run.ts', 'jobs/index.ts', 'scripts/system/printSignIns.ts'];
   await build({
     entryPoints,
     outdir: 'build',
@@ -106,5 +107,5 @@ async function buildServer() {
 }
 
 mkdirSync('build', { recursive: true });
-await buildServer();
+if (!process.argv.includes('--page')) await buildServer();
 if (!process.argv.includes('--server')) await buildPage();

@@ -23,6 +23,17 @@ step() {
   return "$code"
 }
 
+# npm hands a SIGTERM to the shell between it and us, and that one goes without a word: notice that it has gone.
+follow_npm() {
+  if [ -z "${npm_lifecycle_event:-}" ]; then return; fi
+  (
+    trap - EXIT INT TERM HUP
+    while kill -0 "$PPID" 2>/dev/null && kill -0 $$ 2>/dev/null; do sleep 1; done
+    kill -TERM $$ 2>/dev/null
+  ) </dev/null >/dev/null 2>&1 &
+  follower=$!
+}
+
 ensure_node() {
   command -v node >/dev/null || fail "Node.js is not installed. Yardbell needs Node.js 20.19.4 or newer (https://nodejs.org)."
   node -e 'const [a, b, c] = process.versions.node.split(".").map(Number);

@@ -17,7 +17,7 @@ stop_all() {
   local code=$? pid
   trap '' INT TERM HUP
   trap - EXIT
-  for pid in $step_pid "${!names[@]}"; do kill -TERM "$pid" 2>/dev/null || true; done
+  for pid in $step_pid ${follower:-} "${!names[@]}"; do kill -TERM "$pid" 2>/dev/null || true; done
   for _ in $(seq 100); do
     for pid in "${!names[@]}"; do kill -0 "$pid" 2>/dev/null && sleep 0.1 && continue 2; done
     break
@@ -29,6 +29,7 @@ stop_all() {
 trap stop_all EXIT
 trap 'exit 130' INT
 trap 'exit 143' TERM HUP
+follow_npm
 
 # launch name command...: runs behind, its words go to a log of its own
 launch() {
@@ -36,6 +37,8 @@ launch() {
   shift
   "$@" >"$logs/$name.log" 2>&1 </dev/null &
   names[$!]="$name"
+  # the shell need not announce how it ended: we do
+  disown $!
 }
 
 show_log() {
@@ -75,7 +78,7 @@ ensure_postgres
 step node scripts/build.mjs --if-changed || fail "the build did not work"
 
 if [ "$NODE_ENV" != production ] && [ "${YARDBELL_SEED:-demo}" != none ]; then
-  if [ "$(node scripts/system/people.mjs)" = 0 ]; then
+  if [ "$(node scripts/system/countPeople.mjs)" = 0 ]; then
     say "filling the database with demo data"
     step node --enable-source-maps build/server/seeds/run.js >"$logs/seed.log" 2>&1 || { show_log seed && exit 1; }
   fi
@@ -94,7 +97,7 @@ launch worker node --enable-source-maps build/jobs/index.js
 echo
 echo "  Yardbell    $PUBLIC_URL"
 [ -z "$own_mail" ] || echo "  Mail        http://localhost:$mail_web_port (messages are caught here, none leaves this machine)"
-[ -z "${demo:-}" ] || step tsx scripts/system/printSignIns.ts || true
+[ -z "${demo:-}" ] || node build/scripts/system/printSignIns.js || true
 ended="${EPOCHREALTIME/[.,]/}"
 echo "  Started in $(((ended - began) / 1000000)).$(((ended - began) / 100000 % 10)) s. Ctrl-C stops everything."
 echo
@@ -104,7 +107,8 @@ if [ "${1:-}" = --check ]; then
   check_children
   exit 0
 fi
+# not `wait -n`: it misses a child that ended before it was called
 while true; do
-  wait -n || true
   check_children
+  step sleep 1
 done

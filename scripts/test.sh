@@ -2,8 +2,16 @@
 # Every test: unit, API, worker and component tests, then the browser tests against the built page and server.
 # The last line is "N passed, N failed". `npm test -- tests/api/today.test.ts` runs only the vitest files that match.
 . "$(dirname "${BASH_SOURCE[0]}")/lib.sh"
-trap 'kill -TERM "${step_pid:-}" 2>/dev/null; exit 143' TERM HUP
-trap 'kill -TERM "${step_pid:-}" 2>/dev/null; exit 130' INT
+step_pid=
+stop() {
+  local code=$?
+  kill -TERM $step_pid ${follower:-} 2>/dev/null || true
+  exit "$code"
+}
+trap stop EXIT
+trap 'exit 130' INT
+trap 'exit 143' TERM HUP
+follow_npm
 
 ensure_node
 ensure_node_modules

@@ -29,6 +29,7 @@ export async function accountMail(
     {
       id: randomUUID(),
       dedupeKey: `${mail.kind}:${mail.subjectId}`,
+      channel: 'email',
       kind: mail.kind,
       userId: mail.userId ?? null,
       address: mail.address,

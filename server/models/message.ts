@@ -12,7 +12,7 @@ import * as column from './columns';
 export class Message extends Model<InferAttributes<Message>, InferCreationAttributes<Message>> {
   declare id: string;
   declare dedupeKey: string;
-  declare channel: CreationOptional<'email'>;
+  declare channel: 'email';
   declare kind: 'evening' | 'morning' | 'closing' | 'invitation' | 'passwordReset' | 'planChanged';
   declare userId: CreationOptional<string | null>;
   declare address: string;

@@ -44,7 +44,8 @@ interface LinkProps {
 
 export function Link({ children, href, asChild, style, ...rest }: LinkProps) {
   const to = text(href);
-  if (asChild && isValidElement(children)) return cloneElement(children as ReactElement<{ href?: string }>, { href: to });
+  if (asChild && isValidElement(children))
+    return cloneElement(children as ReactElement<{ href?: string }>, { href: to });
   return (
     <a href={to} style={StyleSheet.flatten(style)} {...rest}>
       {children}

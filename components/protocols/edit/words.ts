@@ -1,4 +1,4 @@
-import type { Condition, Gap, Item, ProtocolBody, Step } from '@/protocols/types';
+import type { Gap, Item, Step } from '@/protocols/types';
 import { t, tData } from '@/shared/messages';
 import { duration } from '@/shared/when';
 
@@ -54,19 +54,4 @@ export function gapWords(gap: Gap): string {
   return main;
 }
 
-const orWords = (parts: string[]): string => parts.join(` ${t('protocols.or')} `);
-
-/** Who a step is for: `all`, `not in heat by 66 h`, `with eCG`. */
-export function conditionWords(condition: Condition | undefined, body: ProtocolBody): string {
-  if (!condition) return t('protocols.all');
-  if ('all' in condition) return condition.all.map((c) => conditionWords(c, body)).join(` ${t('protocols.and')} `);
-  if ('any' in condition) return orWords(condition.any.map((c) => conditionWords(c, body)));
-  if ('not' in condition) return `${t('protocols.not')} ${conditionWords(condition.not, body)}`;
-  if ('class' in condition) return orWords(condition.class.map((c) => tData(`class.${c}`, c)));
-  if ('option' in condition) {
-    const option = body.options.find((o) => o.id === condition.option);
-    return option?.values.find((v) => v.id === condition.is)?.label ?? condition.is;
-  }
-  const seen = body.observations.find((o) => o.id === condition.observed);
-  return seen?.results.find((r) => r.id === condition.is)?.label ?? condition.is;
-}
+export { conditionWords } from '@/shared/conditions';

@@ -60,5 +60,9 @@ export const medicines = {
   'medicines.per.g': 'g',
   'medicines.packSize': 'Pack size',
   'medicines.openDays': 'Days once opened',
+  'medicines.audit.product': 'Product {name} added',
+  'medicines.audit.batch': 'Product batch {number} of {name} added',
+  'medicines.audit.issued': '{active} authorised for {head} head until {to}',
+  'medicines.audit.withdrawn': 'Authority for {active} withdrawn',
   'medicines.used': '{used} of {quantity} used',
 } as const;

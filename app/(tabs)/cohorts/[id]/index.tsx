@@ -1,0 +1,1 @@
+export { CohortScreen as default } from '@/components/cohorts/CohortScreen';

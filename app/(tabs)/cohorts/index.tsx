@@ -1,0 +1,1 @@
+export { CohortsScreen as default } from '@/components/cohorts/CohortsScreen';

@@ -1,0 +1,1 @@
+export { PlannerScreen as default } from '@/components/planner/PlannerScreen';

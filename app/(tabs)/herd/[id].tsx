@@ -1,0 +1,1 @@
+export { AnimalScreen as default } from '@/components/herd/AnimalScreen';

@@ -1,0 +1,1 @@
+export { HerdScreen as default } from '@/components/herd/HerdScreen';

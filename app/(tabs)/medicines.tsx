@@ -1,0 +1,1 @@
+export { MedicinesScreen as default } from '@/components/medicines/MedicinesScreen';

@@ -1,0 +1,1 @@
+export { ProtocolsScreen as default } from '@/components/protocols/ProtocolsScreen';

@@ -1,0 +1,1 @@
+export { LibraryProtocolScreen as default } from '@/components/protocols/LibraryProtocolScreen';

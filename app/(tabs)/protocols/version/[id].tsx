@@ -1,0 +1,1 @@
+export { VersionScreen as default } from '@/components/protocols/VersionScreen';

@@ -1,0 +1,1 @@
+export { SetPasswordScreen as default } from '@/components/session/SetPasswordScreen';

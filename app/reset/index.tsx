@@ -1,0 +1,1 @@
+export { AskResetScreen as default } from '@/components/session/AskResetScreen';

@@ -1,0 +1,3 @@
+import { Screen } from '../ui/Screen';
+
+export const MedicinesScreen = () => <Screen title="Medicines" />;

@@ -1,0 +1,3 @@
+import { Screen } from '../ui/Screen';
+
+export const LibraryProtocolScreen = () => <Screen title="Protocol" />;
