@@ -35,7 +35,9 @@ export function GapLine({ visits, gaps, label, onMove, stepMinutes }: GapLinePro
   const [ref, width] = useElementWidth(800);
   const [chosen, setChosen] = useState<string | null>(null);
   const compact = width < compactBelow;
-  const shown: LineVisit[] = compact ? visits.map((visit, i) => ({ ...visit, label: String(i + 1), lines: [] })) : visits;
+  const shown: LineVisit[] = compact
+    ? visits.map((visit, i) => ({ ...visit, label: String(i + 1), lines: [] }))
+    : visits;
   const layout = layoutGapLine(shown, gaps, width);
   const kindsOf = new Map(visits.map((visit) => [visit.id, visit.kinds]));
   const perPixel = Math.max(...visits.map((visit) => visit.latest), 1440) / (width - 40);
@@ -43,19 +45,36 @@ export function GapLine({ visits, gaps, label, onMove, stepMinutes }: GapLinePro
     <View ref={ref} role="group" aria-label={label} style={{ height: layout.above + layout.below, width: '100%' }}>
       <GapLineDrawing layout={layout} chosen={chosen} />
       {layout.visits.map((visit, i) => (
-        <Flag key={visit.id} visit={visit} top={layout.above - visit.lift} number={i + 1} compact={compact} kinds={kindsOf.get(visit.id) ?? []} />
+        <Flag
+          key={visit.id}
+          visit={visit}
+          top={layout.above - visit.lift}
+          number={i + 1}
+          compact={compact}
+          kinds={kindsOf.get(visit.id) ?? []}
+        />
       ))}
       {layout.days
         .filter((day) => day.labelled)
         .map((day) => (
-          <Text key={day.day} variant="small" tone="quiet" align="center" style={[styles.day, { left: day.x - 30, top: layout.above + 12 }]}>
+          <Text
+            key={day.day}
+            variant="small"
+            tone="quiet"
+            align="center"
+            style={[styles.day, { left: day.x - 30, top: layout.above + 12 }]}
+          >
             {compact ? day.day : t('protocols.day', { day: day.day })}
           </Text>
         ))}
       {compact
         ? null
         : layout.gaps.map((gap) => (
-            <Text key={gap.id} align="center" style={[styles.gap, { left: gap.textX - 160, top: layout.above + 40 + gap.row * 34 }]}>
+            <Text
+              key={gap.id}
+              align="center"
+              style={[styles.gap, { left: gap.textX - 160, top: layout.above + 40 + gap.row * 34 }]}
+            >
               <Text style={styles.gapWords}>{` ${gap.label} `}</Text>
             </Text>
           ))}

@@ -29,7 +29,15 @@ export function VisitHandle({ visit, top, step, perPixel, onMove, onFocus }: Han
       aria-valuemin={0}
       aria-valuemax={Math.max(Math.round(visit.minutes / 60) + 240, 240)}
       aria-valuetext={duration(visit.minutes)}
-      style={{ position: 'absolute', left: visit.x - 24, top, width: 48, height: 48, cursor: 'ew-resize', touchAction: 'none' }}
+      style={{
+        position: 'absolute',
+        left: visit.x - 24,
+        top,
+        width: 48,
+        height: 48,
+        cursor: 'ew-resize',
+        touchAction: 'none',
+      }}
       onFocus={() => onFocus(visit.id)}
       onBlur={() => onFocus(null)}
       onKeyDown={(event) => {

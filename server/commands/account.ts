@@ -63,20 +63,22 @@ export async function askPasswordReset(deps: Deps, email: string): Promise<void>
   });
 }
 
-/** Sets a new password by a single-use token. The caller ends the person's sessions. */
-export async function resetPassword(deps: Deps, secret: string, password: string): Promise<string> {
+/** Sets a new password by a single-use token; every session and every other open link of the person ends with it. */
+export async function resetPassword(deps: Deps, secret: string, password: string): Promise<void> {
   const passwordHash = await hashPassword(password);
-  return deps.sequelize.transaction(async (transaction) => {
+  await deps.sequelize.transaction(async (transaction) => {
     const reset = await PasswordReset.findOne({ where: { tokenHash: hashSecret(secret) }, lock: true, transaction });
     if (!reset || reset.usedAt || reset.expiresAt <= deps.now()) throw failure('gone', 'server.badToken');
-    await reset.update({ usedAt: deps.now() }, { transaction });
-    await User.update({ passwordHash, updatedAt: deps.now() }, { where: { id: reset.userId }, transaction });
+    const { userId } = reset;
+    await PasswordReset.update({ usedAt: deps.now() }, { where: { userId, usedAt: null }, transaction });
+    await User.update({ passwordHash, updatedAt: deps.now() }, { where: { id: userId }, transaction });
+    const replacements = { userId };
+    await deps.sequelize.query('delete from sessions where user_id = :userId', { replacements, transaction });
     await audit(transaction, {
-      userId: reset.userId,
+      userId,
       action: 'password.reset',
       summary: t('people.audit.passwordReset'),
     });
-    return reset.userId;
   });
 }
 

@@ -1,11 +1,9 @@
-import { randomUUID } from 'node:crypto';
-
 import { t, tData } from '@/shared/messages';
 import { audit } from '../audit';
 import { hashSecret, newSecret } from '../auth/secrets';
 import type { Deps } from '../deps';
 import { badField, failure } from '../http/errors';
-import { Invitation, Membership, Property, User } from '../models';
+import { Invitation, Membership, Message, Property, User } from '../models';
 import type { Actor } from '../policies/actor';
 import { accountMail } from './account';
 
@@ -66,6 +64,11 @@ export async function withdrawInvitation(deps: Deps, actor: Actor, id: string): 
     const invitation = await Invitation.findByPk(id, { transaction, lock: true });
     if (!invitation) throw failure('notFound', 'server.notFound');
     await invitation.update({ withdrawnAt: deps.now() }, { transaction });
+    // what was not sent yet is not sent any more
+    await Message.update(
+      { state: 'withdrawn', params: {}, updatedAt: deps.now() },
+      { where: { dedupeKey: `invitation:${id}`, state: 'waiting' }, transaction },
+    );
     await audit(transaction, {
       userId: actor.userId,
       propertyId: invitation.propertyId,
@@ -78,11 +81,15 @@ export async function withdrawInvitation(deps: Deps, actor: Actor, id: string): 
 /** Ends a membership of a property. The last manager stays: a property must not be left without one. */
 export async function endMembership(deps: Deps, actor: Actor, id: string): Promise<void> {
   await deps.sequelize.transaction(async (transaction) => {
-    const membership = await Membership.findByPk(id, { transaction, lock: true });
-    if (!membership?.propertyId) throw failure('notFound', 'server.notFound');
+    const found = await Membership.findByPk(id, { transaction });
+    if (!found?.propertyId) throw failure('notFound', 'server.notFound');
+    // one at a time for a property: two managers who remove each other must not both succeed
+    await Property.findByPk(found.propertyId, { transaction, lock: true });
+    const membership = await found.reload({ transaction });
+    if (membership.endedAt) throw failure('notFound', 'server.notFound');
     if (membership.role === 'manager') {
       const managers = await Membership.count({
-        where: { propertyId: membership.propertyId, role: 'manager', endedAt: null },
+        where: { propertyId: found.propertyId, role: 'manager', endedAt: null },
         transaction,
       });
       if (managers <= 1) throw failure('refused', 'server.lastManager');
@@ -94,7 +101,7 @@ export async function endMembership(deps: Deps, actor: Actor, id: string): Promi
       propertyId: membership.propertyId,
       action: 'membership.end',
       summary: t('people.audit.ended', { name: user?.name ?? '' }),
-      detail: { membershipId: id, auditId: randomUUID() },
+      detail: { membershipId: id },
     });
   });
 }

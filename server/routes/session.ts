@@ -1,4 +1,6 @@
-import type { Response } from 'express';
+import { setTimeout as wait } from 'node:timers/promises';
+
+import type { Request, Response } from 'express';
 
 import { acceptInvitation, askPasswordReset, openInvitation, resetPassword } from '../commands/account';
 import { checkPassword } from '../auth/password';
@@ -13,9 +15,14 @@ import { withinTries } from './tries';
 
 const sessionsOf = (deps: Deps) => createLucia(deps.pool, deps.env.NODE_ENV === 'production');
 
-/** Opens a session for a person and answers what they may see. */
-async function begin(deps: Deps, res: Response, user: User) {
+/** Milliseconds before a request for a reset is answered: writing the mail takes far less, so its time tells nothing. */
+const resetTakes = 150;
+
+/** Opens a session for a person and answers what they may see. The session that the browser had before ends. */
+async function begin(deps: Deps, req: Request, res: Response, user: User) {
   const sessions = sessionsOf(deps);
+  const before = sessions.readSessionCookie(req.headers.cookie ?? '');
+  if (before) await sessions.invalidateSession(before);
   const session = await sessions.createSession(user.id, {});
   res.append('Set-Cookie', sessions.createSessionCookie(session.id).serialize());
   const actor = await loadActor(deps.pool, { id: user.id, name: user.name, email: user.email }, deps.now());
@@ -31,13 +38,13 @@ export const sessionHandlers: Handlers<
   | 'GET /api/invitations/:token'
   | 'POST /api/invitations/:token'
 > = {
-  'POST /api/session': async ({ input, deps, res }) => {
+  'POST /api/session': async ({ input, deps, req, res }) => {
     const { email, password } = input.body;
     withinTries(email, deps.now());
     const user = await User.findOne({ where: { email } });
     const fits = await checkPassword(user?.passwordHash ?? null, password);
     if (!user || !fits) throw failure('unauthenticated', 'server.badCredentials');
-    return begin(deps, res, user);
+    return begin(deps, req, res, user);
   },
   'DELETE /api/session': async ({ deps, req, res }) => {
     const sessions = sessionsOf(deps);
@@ -47,12 +54,13 @@ export const sessionHandlers: Handlers<
     return { ok: true };
   },
   'POST /api/password-resets': async ({ input, deps }) => {
-    await askPasswordReset(deps, input.body.email);
+    const { email } = input.body;
+    withinTries(`reset ${email}`, deps.now());
+    await Promise.all([askPasswordReset(deps, email), wait(resetTakes)]);
     return { ok: true };
   },
   'POST /api/password-resets/:token': async ({ input, deps }) => {
-    const userId = await resetPassword(deps, input.params.token, input.body.password);
-    await sessionsOf(deps).invalidateUserSessions(userId);
+    await resetPassword(deps, input.params.token, input.body.password);
     return { ok: true };
   },
   'GET /api/invitations/:token': async ({ input, deps }) => {
@@ -72,9 +80,12 @@ export const sessionHandlers: Handlers<
       known: known !== null,
     };
   },
-  'POST /api/invitations/:token': async ({ input, deps, res }) => {
+  'POST /api/invitations/:token': async ({ input, deps, req, res }) => {
     const { name, password } = input.body;
+    // whoever holds the link could otherwise guess the password of its address
+    const { email } = await openInvitation(deps, input.params.token);
+    withinTries(email, deps.now());
     const user = await acceptInvitation(deps, input.params.token, { password, ...(name ? { name } : {}) });
-    return begin(deps, res, user);
+    return begin(deps, req, res, user);
   },
 };

@@ -1,6 +1,6 @@
 import type { Gap, ProtocolBody, Step, StepKind, Visit } from '@/protocols/types';
 
-import { newItems, newStep } from './defaults';
+import { newStep } from './defaults';
 import { freeId } from './ids';
 
 /** Edits of a protocol body: each takes a body and gives a new one, so that undo is keeping the old. */
@@ -42,13 +42,9 @@ export function addGap(body: ProtocolBody, from: string, to: string): { body: Pr
 const replaceById = <T extends { id: string }>(list: T[], id: string, change: (item: T) => T): T[] =>
   list.map((item) => (item.id === id ? change(item) : item));
 
-/** Changes a step. A new kind brings its usual items, since the old ones no longer fit. */
-export function updateStep(body: ProtocolBody, id: string, next: Step): ProtocolBody {
-  const steps = replaceById(body.steps, id, (step) =>
-    next.kind === step.kind ? next : { ...next, items: newItems(next.kind) },
-  );
-  return dropEmptyVisits({ ...body, steps });
-}
+/** Changes a step as a whole. */
+export const updateStep = (body: ProtocolBody, id: string, next: Step): ProtocolBody =>
+  dropEmptyVisits({ ...body, steps: replaceById(body.steps, id, () => next) });
 
 export const updateVisit = (body: ProtocolBody, id: string, patch: Partial<Omit<Visit, 'id'>>): ProtocolBody => ({
   ...body,

@@ -55,3 +55,11 @@ export function gapWords(gap: Gap): string {
 }
 
 export { conditionWords } from '@/shared/conditions';
+
+/** Short form for the line: `GnRH 100 µg`. */
+export function shortStep(step: Step): string {
+  const item = step.items[0];
+  const name = stepName(step);
+  if (!item || item.amount === undefined || item.unit === 'device' || item.unit === 'patch') return name;
+  return `${name} ${figure(item.amount)} ${tData(`unit.${item.unit}`, item.unit)}`;
+}
