@@ -73,7 +73,12 @@ export default defineConfig([
     },
   },
   { ignores: ['tests/**'], rules: { 'max-lines-per-function': functionLength(60) } },
-  { files: ['app/**', 'components/**/*Screen.tsx'], rules: { 'max-lines-per-function': functionLength(100) } },
+  // screens and the panes and dialogs that they are made of are mostly markup; kit and charts keep the shorter limit
+  {
+    files: ['app/**', 'components/**/*.tsx'],
+    ignores: ['components/ui/**', 'components/theme/**', 'components/charts/**'],
+    rules: { 'max-lines-per-function': functionLength(100) },
+  },
   coreIsPure,
   {
     files: ['server/**', 'jobs/**', 'scripts/**', 'tests/**', '*.config.{js,ts}'],

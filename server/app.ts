@@ -1,17 +1,17 @@
-import { randomUUID } from 'node:crypto';
-
 import compression from 'compression';
 import express, { type Express } from 'express';
 import helmet from 'helmet';
-import { pinoHttp } from 'pino-http';
 
+import type { RouteName } from '@/shared/routes';
 import { createLucia } from './auth/sessions';
 import type { Deps } from './deps';
 import { sameSite } from './http/csrf';
 import { errorHandler, failure } from './http/errors';
+import type { Handlers } from './http/handler';
+import { requestLog } from './http/log';
 import { register } from './http/register';
 import { serveApp } from './http/static';
-import { handlers } from './routes';
+import { handlers as ours } from './routes';
 
 /** style-src needs inline: react-native-web and expo-font write their style elements by script. */
 const contentSecurityPolicy = {
@@ -32,31 +32,13 @@ const contentSecurityPolicy = {
   },
 };
 
-/** Secrets stand in some paths (calendar links, resets, invitations): the log shows the path without them. */
-export const withoutSecrets = (url: string): string =>
-  url.replace(/(\/(?:api\/)?(?:calendar|password-resets|invitations|reset|invitation)\/)[^/?#]+/, '$1…');
-
-/** The whole server as an Express application; nothing listens yet. */
-export function createApp(deps: Deps): Express {
+/** The whole server as an Express application; nothing listens yet. Tests may put handlers of their own in. */
+export function createApp(deps: Deps, { handlers = ours }: { handlers?: Handlers<RouteName> } = {}): Express {
   const { env } = deps;
   const app = express();
   app.disable('x-powered-by');
   app.set('trust proxy', env.TRUST_PROXY);
-  app.use(
-    pinoHttp({
-      logger: deps.log,
-      genReqId: () => randomUUID(),
-      autoLogging: env.NODE_ENV !== 'test',
-      serializers: {
-        req: (req: { id: string; method: string; url: string }) => ({
-          id: req.id,
-          method: req.method,
-          url: withoutSecrets(req.url),
-        }),
-        res: (res: { statusCode: number }) => ({ status: res.statusCode }),
-      },
-    }),
-  );
+  app.use(requestLog(deps));
   app.use(
     helmet({
       contentSecurityPolicy,

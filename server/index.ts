@@ -3,12 +3,18 @@ import { pino } from 'pino';
 import { createApp } from './app';
 import { openDb } from './db';
 import { loadEnv } from './env';
+import { toAppError } from './http/errors';
 import { migrate } from './migrate';
 
 const env = loadEnv();
 const log = pino({ level: env.LOG_LEVEL });
 const db = openDb(env.DATABASE_URL);
-const done = await migrate(db.sequelize);
+const done = await migrate(db.sequelize).catch((error: unknown) => {
+  const away = toAppError(error).id === 'unavailable';
+  log.fatal(away ? 'the database does not answer; look at DATABASE_URL' : 'the database could not be migrated');
+  log.fatal(error instanceof Error ? error.message : String(error));
+  process.exit(1);
+});
 if (done.length > 0) log.info({ done }, 'migrated');
 
 const app = createApp({ env, log, sequelize: db.sequelize, pool: db.pool, now: () => new Date() });

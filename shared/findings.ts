@@ -36,10 +36,14 @@ function namedParams(finding: Finding, words: FindingWords): MessageParams {
   for (const key of ['step', 'from', 'to', 'visit', 'observation', 'option'] as const)
     if (typeof raw[key] === 'string') out[key] = named(raw[key]);
   for (const key of ['active', 'class'] as const)
-    if (typeof raw[key] === 'string') out[key] = tData(`${key}.${raw[key]}`, raw[key]);
+    if (typeof raw[key] === 'string') out[key] = lowerFirst(tData(`${key}.${raw[key]}`, raw[key]));
   if (Array.isArray(raw.classes)) out.classes = raw.classes.map((c) => tData(`class.${c}`, c)).join(', ');
   return { ...out, ...special(finding, words, named) };
 }
+
+/** A word inside a sentence; names such as eCG, GnRH and FSH stay as they are. */
+const lowerFirst = (word: string): string =>
+  /^.[A-Z]|^[A-Z][a-z][A-Z]/.test(word) ? word : word.charAt(0).toLowerCase() + word.slice(1);
 
 /** Names of steps, visits, gaps, observations by id. */
 function names(body: ProtocolBody | null | undefined): (id: string) => string {

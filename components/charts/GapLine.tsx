@@ -7,7 +7,7 @@ import { color, font } from '../theme/tokens';
 import { Text } from '../ui/Text';
 import { TreatmentMark } from '../ui/TreatmentMark';
 import { GapLineDrawing } from './GapLineDrawing';
-import { layoutGapLine, type LineGap, type LineVisit, type PlacedVisit } from './gapLineLayout';
+import { layoutGapLine, type GapLineLayout, type LineGap, type LineVisit, type PlacedVisit } from './gapLineLayout';
 import { useElementWidth } from './useElementWidth';
 import { VisitHandle } from './VisitHandle';
 
@@ -38,7 +38,7 @@ export function GapLine({ visits, gaps, label, onMove, stepMinutes }: GapLinePro
   const shown: LineVisit[] = compact
     ? visits.map((visit, i) => ({ ...visit, label: String(i + 1), lines: [] }))
     : visits;
-  const layout = layoutGapLine(shown, gaps, width);
+  const layout = layoutGapLine(shown, compact ? gaps.map((gap) => ({ ...gap, label: gap.short })) : gaps, width);
   const kindsOf = new Map(visits.map((visit) => [visit.id, visit.kinds]));
   const perPixel = Math.max(...visits.map((visit) => visit.latest), 1440) / (width - 40);
   return (
@@ -47,6 +47,7 @@ export function GapLine({ visits, gaps, label, onMove, stepMinutes }: GapLinePro
       {layout.visits.map((visit, i) => (
         <Flag
           key={visit.id}
+          lineWidth={width}
           visit={visit}
           top={layout.above - visit.lift}
           number={i + 1}
@@ -54,30 +55,8 @@ export function GapLine({ visits, gaps, label, onMove, stepMinutes }: GapLinePro
           kinds={kindsOf.get(visit.id) ?? []}
         />
       ))}
-      {layout.days
-        .filter((day) => day.labelled)
-        .map((day) => (
-          <Text
-            key={day.day}
-            variant="small"
-            tone="quiet"
-            align="center"
-            style={[styles.day, { left: day.x - 30, top: layout.above + 12 }]}
-          >
-            {compact ? day.day : t('protocols.day', { day: day.day })}
-          </Text>
-        ))}
-      {compact
-        ? null
-        : layout.gaps.map((gap) => (
-            <Text
-              key={gap.id}
-              align="center"
-              style={[styles.gap, { left: gap.textX - 160, top: layout.above + 40 + gap.row * 34 }]}
-            >
-              <Text style={styles.gapWords}>{` ${gap.label} `}</Text>
-            </Text>
-          ))}
+      <Days layout={layout} compact={compact} />
+      <GapWords layout={layout} compact={compact} />
       {onMove
         ? layout.visits.map((visit) => (
             <VisitHandle
@@ -95,7 +74,47 @@ export function GapLine({ visits, gaps, label, onMove, stepMinutes }: GapLinePro
   );
 }
 
+interface WordsProps {
+  layout: GapLineLayout;
+  compact: boolean;
+}
+
+const Days = ({ layout, compact }: WordsProps) => (
+  <>
+    {layout.days
+      .filter((day) => day.labelled)
+      .map((day) => (
+        <Text
+          key={day.day}
+          variant="small"
+          tone="quiet"
+          align="center"
+          style={[styles.day, { left: day.x - 30, top: layout.above + 12 }]}
+        >
+          {compact ? day.day : t('protocols.day', { day: day.day })}
+        </Text>
+      ))}
+  </>
+);
+
+const GapWords = ({ layout, compact }: WordsProps) => (
+  <>
+    {layout.gaps.map((gap) =>
+      compact && !gap.fits ? null : (
+        <Text
+          key={gap.id}
+          align="center"
+          style={[styles.gap, { left: gap.textX - 200, top: layout.above + 40 + gap.row * 34 }]}
+        >
+          <Text style={styles.gapWords}>{` ${gap.label} `}</Text>
+        </Text>
+      ),
+    )}
+  </>
+);
+
 interface FlagProps {
+  lineWidth: number;
   visit: PlacedVisit;
   top: number;
   number: number;
@@ -103,15 +122,20 @@ interface FlagProps {
   kinds: StepKind[];
 }
 
-function Flag({ visit, top, number, compact, kinds }: FlagProps) {
+function Flag({ lineWidth, visit, top, number, compact, kinds }: FlagProps) {
   if (compact)
     return (
-      <Text variant="figure" align="center" style={[styles.number, { left: visit.x - 16, top: top - 8 }]}>
+      <Text variant="figure" align="center" style={[styles.number, { left: visit.x - 16, top: top - 12 }]}>
         {number}
       </Text>
     );
   return (
-    <View style={[styles.flag, { left: visit.textX + 8, top }]}>
+    <View
+      style={[
+        styles.flag,
+        visit.flipped ? { right: lineWidth - visit.x + 8, top, alignItems: 'flex-end' } : { left: visit.x + 8, top },
+      ]}
+    >
       <Text variant="small" tone="quiet">
         {visit.label}
       </Text>
@@ -133,6 +157,6 @@ const styles = StyleSheet.create({
   words: { fontFamily: font.figure, fontWeight: '600', fontSize: 18, lineHeight: 24 },
   number: { position: 'absolute', width: 32 },
   day: { position: 'absolute', width: 60 },
-  gap: { position: 'absolute', width: 320, pointerEvents: 'none' },
+  gap: { position: 'absolute', width: 400, pointerEvents: 'none' },
   gapWords: { fontFamily: font.figure, fontWeight: '600', fontSize: 17, lineHeight: 24, backgroundColor: color.page },
 });

@@ -13,16 +13,6 @@ export function GapLineDrawing({ layout, chosen }: { layout: GapLineLayout; chos
       {layout.visits.map((visit) => (
         <g key={visit.id}>
           <line x1={visit.x} x2={visit.x} y1={above - visit.lift} y2={above} stroke={color.ink} strokeWidth={2} />
-          {visit.textX + 8 < visit.x ? (
-            <line
-              x1={visit.textX + 8}
-              x2={visit.x}
-              y1={above - visit.lift}
-              y2={above - visit.lift}
-              stroke={color.ink}
-              strokeWidth={2}
-            />
-          ) : null}
           <rect
             x={visit.windowX}
             y={above - 6}

@@ -15,6 +15,8 @@ export interface LineGap {
   from: string;
   to: string;
   label: string;
+  /** For a narrow line: `54 h`. */
+  short: string;
 }
 export interface PlacedVisit extends LineVisit {
   x: number;
@@ -26,6 +28,8 @@ export interface PlacedVisit extends LineVisit {
   row: number;
   /** Distance of the flag's top above the line. */
   lift: number;
+  /** No room at the right: the text stands at the left of its pole. */
+  flipped: boolean;
 }
 export interface PlacedGap extends LineGap {
   x1: number;
@@ -77,16 +81,17 @@ function placeVisits(visits: LineVisit[], x: (minutes: number) => number, width:
   for (const visit of [...visits].sort((a, b) => b.minutes - a.minutes)) {
     const w = textWidth([visit.label, ...visit.lines.map((line) => line.text)]);
     const at = x(visit.minutes);
-    const textX = at + w > width ? Math.max(0, width - w) : at;
+    const flipped = at + w > width && visit.lines.length > 0;
+    const textX = flipped ? Math.max(0, at - w) : at;
     const height = headHeight + visit.lines.length * lineHeight;
     const base = ceiling
-      .filter((span) => span.left < textX + w && span.right > Math.min(at, textX))
+      .filter((span) => span.left < textX + w && span.right > textX)
       .reduce((top, span) => Math.max(top, span.top), 14);
     const lift = base + height;
-    ceiling = [...ceiling, { left: Math.min(at, textX), right: textX + w, top: lift + 6 }];
+    ceiling = [...ceiling, { left: textX, right: textX + w, top: lift + 6 }];
     const windowX = x(visit.earliest);
     const windowWidth = Math.max(x(visit.latest) - windowX, 6);
-    placed.push({ ...visit, x: at, windowX, windowWidth, textX, row: ceiling.length - 1, lift });
+    placed.push({ ...visit, x: at, windowX, windowWidth, textX, row: ceiling.length - 1, lift, flipped });
   }
   return placed.reverse();
 }
@@ -105,7 +110,7 @@ function placeGaps(gaps: LineGap[], visits: PlacedVisit[], width: number): Place
     const textX = fits ? middle : Math.min(Math.max(middle, words / 2), width - words / 2);
     const left = fits ? x1 : Math.min(x1, textX - words / 2);
     const right = fits ? x2 : Math.max(x2, textX + words / 2);
-    return [{ ...gap, x1, x2, fits, textX, row: takeRow(rows, left - 4, right + 4) }];
+    return [{ ...gap, x1, x2, fits, textX, row: takeRow(rows, left, right) }];
   });
 }
 

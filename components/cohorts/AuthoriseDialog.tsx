@@ -39,6 +39,23 @@ const first = (need: Need, cohort: CohortDetail) => ({
   directions: '',
 });
 
+type AuthorityForm = ReturnType<typeof first>;
+
+const inputOf = (need: Need, form: AuthorityForm) => ({
+  active: need.active,
+  productId: form.productId === 'any' ? null : form.productId,
+  amount: number(form.amount),
+  unit: need.unit,
+  route: need.route,
+  classes: need.classes,
+  head: number(form.head),
+  validFrom: form.validFrom,
+  validTo: form.validTo,
+  meatDays: optional(form.meatDays),
+  milkHours: optional(form.milkHours),
+  directions: form.directions,
+});
+
 /** The vet's written direction for one active: what, how much, for how many of which class, valid until. */
 export function AuthoriseDialog({ cohort, need, onClose }: { cohort: CohortDetail; need: Need; onClose: () => void }) {
   const [form, setForm, accepted] = useKept(
@@ -57,28 +74,12 @@ export function AuthoriseDialog({ cohort, need, onClose }: { cohort: CohortDetai
   const issue = () => {
     setTried(true);
     if (!(number(form.head) > 0) || !(number(form.amount) > 0)) return;
-    authorise.mutate(
-      {
-        active: need.active,
-        productId: form.productId === 'any' ? null : form.productId,
-        amount: number(form.amount),
-        unit: need.unit,
-        route: need.route,
-        classes: need.classes,
-        head: number(form.head),
-        validFrom: form.validFrom,
-        validTo: form.validTo,
-        meatDays: optional(form.meatDays),
-        milkHours: optional(form.milkHours),
-        directions: form.directions,
+    authorise.mutate(inputOf(need, form), {
+      onSuccess: () => {
+        accepted();
+        onClose();
       },
-      {
-        onSuccess: () => {
-          accepted();
-          onClose();
-        },
-      },
-    );
+    });
   };
   const active = tData(`active.${need.active}`, need.active).toLowerCase();
   return (
@@ -118,34 +119,7 @@ export function AuthoriseDialog({ cohort, need, onClose }: { cohort: CohortDetai
             ...products.map((product) => ({ value: product.id, label: product.name })),
           ]}
         />
-        <DateField
-          label={t('medicines.validFrom')}
-          value={form.validFrom}
-          onChange={set('validFrom')}
-          error={fieldError(authorise.error, 'validFrom')}
-        />
-        <DateField
-          label={t('medicines.validTo')}
-          value={form.validTo}
-          onChange={set('validTo')}
-          error={fieldError(authorise.error, 'validTo')}
-        />
-        <Field
-          label={t('medicines.meatDays')}
-          numeric
-          value={form.meatDays}
-          onChange={set('meatDays')}
-          hint={t('medicines.byLabel')}
-          error={fieldError(authorise.error, 'meatDays')}
-        />
-        <Field
-          label={t('medicines.milkHours')}
-          numeric
-          value={form.milkHours}
-          onChange={set('milkHours')}
-          hint={t('medicines.byLabel')}
-          error={fieldError(authorise.error, 'milkHours')}
-        />
+        <DatesAndWithholding form={form} set={set} error={authorise.error} />
         <Field
           label={t('medicines.directions')}
           multiline
@@ -161,3 +135,43 @@ export function AuthoriseDialog({ cohort, need, onClose }: { cohort: CohortDetai
     </Dialog>
   );
 }
+
+interface PartProps {
+  form: AuthorityForm;
+  set: (key: keyof AuthorityForm) => (value: string) => void;
+  error: unknown;
+}
+
+/** Until when it holds, and the withholding that the vet writes; empty: as the label says. */
+const DatesAndWithholding = ({ form, set, error }: PartProps) => (
+  <>
+    <DateField
+      label={t('medicines.validFrom')}
+      value={form.validFrom}
+      onChange={set('validFrom')}
+      error={fieldError(error, 'validFrom')}
+    />
+    <DateField
+      label={t('medicines.validTo')}
+      value={form.validTo}
+      onChange={set('validTo')}
+      error={fieldError(error, 'validTo')}
+    />
+    <Field
+      label={t('medicines.meatDays')}
+      numeric
+      value={form.meatDays}
+      onChange={set('meatDays')}
+      hint={t('medicines.byLabel')}
+      error={fieldError(error, 'meatDays')}
+    />
+    <Field
+      label={t('medicines.milkHours')}
+      numeric
+      value={form.milkHours}
+      onChange={set('milkHours')}
+      hint={t('medicines.byLabel')}
+      error={fieldError(error, 'milkHours')}
+    />
+  </>
+);

@@ -1,11 +1,10 @@
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
-import { useMove, useMovePreview } from '@/hooks/useCohorts';
-import { useCohort } from '@/hooks/useCohorts';
+import { useCohort, useMove, useMovePreview } from '@/hooks/useCohorts';
 import type { MovePreview, Task } from '@/shared/contracts/cohorts';
 import { t } from '@/shared/messages';
-import { localOf, zoneName } from '@/shared/when';
+import { localOf } from '@/shared/when';
 import { color, space } from '../theme/tokens';
 import { Button } from '../ui/Button';
 import { DateTimeField, isWholeLocal } from '../ui/DateTimeField';
@@ -64,12 +63,7 @@ export function MoveDialog({ task: opened, onClose }: { task: Task; onClose: () 
         </>
       }
     >
-      <DateTimeField
-        label={t('move.to', { zone: zoneName(Date.parse(task.dueAt), task.zone) })}
-        value={local}
-        onChange={setLocal}
-        zone={task.zone}
-      />
+      <DateTimeField label={t('move.to')} value={local} onChange={setLocal} zone={task.zone} />
       {error ? <Notice tone="stop">{failureWords(error)}</Notice> : null}
       {seen ? <Effects seen={seen} /> : null}
     </Dialog>

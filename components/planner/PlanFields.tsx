@@ -4,7 +4,6 @@ import { useProtocols } from '@/hooks/useProtocols';
 import type { CohortDetail } from '@/shared/contracts/cohorts';
 import type { VersionDetail } from '@/shared/contracts/protocols';
 import { t } from '@/shared/messages';
-import { zoneName } from '@/shared/when';
 import { space } from '../theme/tokens';
 import { Button } from '../ui/Button';
 import { DateTimeField } from '../ui/DateTimeField';
@@ -65,9 +64,7 @@ export function PlanFields({ cohort, form, change, version }: FieldsProps) {
           ]}
         />
         <DateTimeField
-          label={t('planner.time', {
-            zone: zoneName(form.local ? Date.parse(`${form.local.slice(0, 10)}T12:00:00Z`) || 0 : 0, cohort.zone),
-          })}
+          label={t('planner.time')}
           value={form.local}
           zone={cohort.zone}
           onChange={(local) => change({ local })}

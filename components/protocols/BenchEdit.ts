@@ -9,3 +9,10 @@ export interface BenchEdit {
   open: (part: Part) => void;
   addStep: (visit: string) => void;
 }
+
+/** What the dialog of a part is given. */
+export interface PartProps {
+  body: ProtocolBody;
+  change: (edit: (body: ProtocolBody) => ProtocolBody) => void;
+  onClose: () => void;
+}

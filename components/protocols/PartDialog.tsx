@@ -1,16 +1,9 @@
-import type { ProtocolBody } from '@/protocols/types';
-import type { Part } from './BenchEdit';
+import type { Part, PartProps } from './BenchEdit';
 import { DetailsDialog } from './dialogs/DetailsDialog';
 import { GapDialog } from './dialogs/GapDialog';
 import { NewGapDialog, NewVisitDialog } from './dialogs/NewParts';
 import { StepDialog } from './dialogs/StepDialog';
 import { VisitDialog } from './dialogs/VisitDialog';
-
-export interface PartProps {
-  body: ProtocolBody;
-  change: (edit: (body: ProtocolBody) => ProtocolBody) => void;
-  onClose: () => void;
-}
 
 /** The dialog of the part that is open. A part that is gone closes it. */
 export function PartDialog({ part, ...rest }: PartProps & { part: Part }) {

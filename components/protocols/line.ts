@@ -2,7 +2,7 @@ import { checkProtocol } from '@/protocols/plan/check';
 import type { ProtocolBody } from '@/protocols/types';
 import type { GapLineVisit } from '../charts/GapLine';
 import type { LineGap } from '../charts/gapLineLayout';
-import { gapWords, shortStep } from './edit/words';
+import { boundWords, gapWords, shortStep } from './edit/words';
 
 /** The protocol as a line, with the default options: visits with their windows, gaps with their words. */
 export function lineOf(body: ProtocolBody): { visits: GapLineVisit[]; gaps: LineGap[] } {
@@ -23,7 +23,9 @@ export function lineOf(body: ProtocolBody): { visits: GapLineVisit[]; gaps: Line
   const visitOf = (step: string) => body.steps.find((s) => s.id === step)?.visit ?? '';
   const gaps = body.gaps.flatMap((gap): LineGap[] => {
     const [from, to] = [visitOf(gap.from), visitOf(gap.to)];
-    return from !== to && shown.has(from) && shown.has(to) ? [{ id: gap.id, from, to, label: gapWords(gap) }] : [];
+    return from !== to && shown.has(from) && shown.has(to)
+      ? [{ id: gap.id, from, to, label: gapWords(gap), short: boundWords(gap, 'ideal') }]
+      : [];
   });
   return { visits, gaps };
 }

@@ -104,7 +104,7 @@ const styles = StyleSheet.create({
     borderBottomColor: color.ink,
   },
   words: { flexShrink: 1, minWidth: 0, gap: 2 },
-  toolbar: { flexDirection: 'row', flexWrap: 'wrap', gap: space.s },
+  toolbar: { flexDirection: 'row', flexWrap: 'wrap', gap: space.s, flexShrink: 1, maxWidth: '100%' },
   body: { paddingTop: space.m, gap: space.m },
   reading: { maxWidth: 880 },
   rest: { flex: 1, minHeight: 0 },

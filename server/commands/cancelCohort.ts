@@ -9,7 +9,11 @@ import { planReminders } from './planReminders';
 /** Cancels a cohort: what is recorded stays, open tasks are cancelled, and calendars and reminders follow. */
 export async function cancelCohort(deps: Deps, actor: Actor, id: string, reason: string): Promise<void> {
   await deps.sequelize.transaction(async (transaction) => {
-    const cohort = await Cohort.findByPk(id, { transaction, lock: transaction.LOCK.UPDATE, rejectOnEmpty: true });
+    const cohort = await Cohort.findByPk(id, {
+      transaction,
+      lock: transaction.LOCK.NO_KEY_UPDATE,
+      rejectOnEmpty: true,
+    });
     if (cohort.state === 'cancelled') return;
     if (cohort.state === 'finished') throw failure('refused', 'server.cohort.over');
     const open = await Task.findAll({ where: { cohortId: id, state: ['planned', 'inWork'] }, transaction });

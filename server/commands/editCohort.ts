@@ -23,6 +23,9 @@ export async function createCohort(deps: Deps, actor: Actor, propertyId: string,
     if (again) throw failure('conflict', 'server.sameId');
     const property = await Property.findByPk(propertyId, { transaction, rejectOnEmpty: true });
     await mustBeUsable(deps, propertyId, input.protocolVersionId ?? null, transaction);
+    const visit = input.anchor?.visit ?? null;
+    if (!(await hasVisit(deps, input.protocolVersionId ?? null, visit, transaction)))
+      throw badField('anchor.visit', t('server.cohort.unknownVisit'));
     await Cohort.create(
       {
         id: input.id,
@@ -30,7 +33,7 @@ export async function createCohort(deps: Deps, actor: Actor, propertyId: string,
         name: input.name,
         protocolVersionId: input.protocolVersionId ?? null,
         options: input.options ?? {},
-        anchorVisit: input.anchor?.visit ?? null,
+        anchorVisit: visit,
         anchorLocal: input.anchor?.local ?? null,
         zone: property.zone,
         createdBy: actor.userId,
@@ -55,18 +58,26 @@ export async function createCohort(deps: Deps, actor: Actor, propertyId: string,
 /** Changes a cohort that is being planned: absent leaves, null clears, groups are replaced as a whole. */
 export async function patchCohort(deps: Deps, actor: Actor, id: string, patch: Patch): Promise<void> {
   await deps.sequelize.transaction(async (transaction) => {
-    const cohort = await Cohort.findByPk(id, { transaction, lock: transaction.LOCK.UPDATE, rejectOnEmpty: true });
+    const cohort = await Cohort.findByPk(id, {
+      transaction,
+      lock: transaction.LOCK.NO_KEY_UPDATE,
+      rejectOnEmpty: true,
+    });
     if (cohort.state !== 'planning') throw failure('refused', 'server.cohort.notPlanning');
     if (cohort.revision !== patch.revision) throw failure('stale', 'server.cohort.stale');
     if (patch.protocolVersionId) await mustBeUsable(deps, cohort.propertyId, patch.protocolVersionId, transaction);
+    const versionId = patch.protocolVersionId === undefined ? cohort.protocolVersionId : patch.protocolVersionId;
+    const visit = patch.anchor === undefined ? cohort.anchorVisit : (patch.anchor?.visit ?? null);
+    const known = await hasVisit(deps, versionId, visit, transaction);
+    if (!known && patch.anchor) throw badField('anchor.visit', t('server.cohort.unknownVisit'));
     await cohort.update(
       {
         ...(patch.name === undefined ? {} : { name: patch.name }),
         ...(patch.protocolVersionId === undefined ? {} : { protocolVersionId: patch.protocolVersionId }),
         ...(patch.options === undefined ? {} : { options: patch.options }),
-        ...(patch.anchor === undefined
-          ? {}
-          : { anchorVisit: patch.anchor?.visit ?? null, anchorLocal: patch.anchor?.local ?? null }),
+        // another protocol may lack the visit that was fixed: then its service is
+        anchorVisit: known ? visit : null,
+        ...(patch.anchor === undefined ? {} : { anchorLocal: patch.anchor?.local ?? null }),
         revision: cohort.revision + 1,
         updatedAt: deps.now(),
       },
@@ -99,6 +110,18 @@ async function mustBeUsable(deps: Deps, propertyId: string, versionId: string | 
     tx,
   );
   if (found.length === 0) throw badField('protocolVersionId', t('server.cohort.notSignedOff'));
+}
+
+/** Whether the visit that a plan hangs on is one of the protocol's; without one, or without a protocol, nothing is wrong. */
+async function hasVisit(deps: Deps, versionId: string | null, visit: string | null, tx: Transaction): Promise<boolean> {
+  if (!versionId || visit === null) return true;
+  const found = await rows<{ ok: number }>(
+    deps,
+    `select 1 as ok from protocol_versions where id = $1 and body->'visits' @> jsonb_build_array(jsonb_build_object('id', $2::text))`,
+    [versionId, visit],
+    tx,
+  );
+  return found.length > 0;
 }
 
 /** Checks every group before any is written, and names the one that is wrong. */

@@ -4,7 +4,7 @@ import { authorityCover, authorityFindings, type NeedCover } from '@/protocols/p
 import { calendarFindings } from '@/protocols/plan/calendarFindings';
 import { eligibility } from '@/protocols/plan/eligibility';
 import { expand, visitOfStep } from '@/protocols/plan/expand';
-import { localDate, toInstant } from '@/protocols/time/zoned';
+import { clockOf, localDate, toInstant } from '@/protocols/time/zoned';
 import type { Finding, PlannedVisit, ProtocolBody } from '@/protocols/types';
 import { permissionsOf } from '../queries/authorityUse';
 import { headOf, type PlanSource, type SourceGroup } from '../queries/planSource';
@@ -133,27 +133,30 @@ function animalsOf(body: ProtocolBody, group: SourceGroup, visits: PlannedVisit[
     : [finding('wrongClass', 'warn', { count: group.headOnly, tags: [], classes: body.classes })];
 }
 
-/** Another cohort in the yards on the same local day. */
+/** Forenoon or afternoon of a local day: two yardings in the same one want the same yards. */
+const halfDay = (at: number, zone: string): string =>
+  `${localDate(at, zone)} ${clockOf(at, zone) < '12:00' ? 'forenoon' : 'afternoon'}`;
+
+/** Other cohorts in the yards on the same half of a day. */
 function clashes(source: PlanSource, body: ProtocolBody, visits: PlannedVisit[]): Finding[] {
   const { zone } = source.cohort;
   const yarded = new Set(body.visits.filter((visit) => visit.yarded).map((visit) => visit.id));
-  const byDay = new Map(source.others.map((other) => [localDate(other.dueAt.getTime(), zone), other]));
-  return visits.flatMap((visit) => {
-    const other = yarded.has(visit.visit) ? byDay.get(localDate(visit.at, zone)) : undefined;
-    if (!other) return [];
-    return [
-      {
-        ...finding('clash', 'note', {
-          visit: visit.visit,
-          dueAt: visit.at,
-          cohort: other.cohort,
-          title: other.title,
-          otherAt: other.dueAt.getTime(),
-        }),
-        visits: [visit.visit],
-      },
-    ];
-  });
+  return visits
+    .filter((visit) => yarded.has(visit.visit))
+    .flatMap((visit) =>
+      source.others
+        .filter((other) => halfDay(other.dueAt.getTime(), zone) === halfDay(visit.at, zone))
+        .map((other) => ({
+          ...finding('clash', 'warn', {
+            visit: visit.visit,
+            dueAt: visit.at,
+            cohort: other.cohort,
+            title: other.title,
+            otherAt: other.dueAt.getTime(),
+          }),
+          visits: [visit.visit],
+        })),
+    );
 }
 
 /** The same finding of several groups at the same moment is said once. */

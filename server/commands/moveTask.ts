@@ -32,10 +32,10 @@ export interface Move {
   source: PlanSource;
 }
 
-/** When each visit of a group was begun: the first animal treated, since times are planned for the first animal. */
+/** When each visit of a group was begun: the first animal treated, since times are planned for the first animal. What could not be done is no treatment. */
 const doneSql = `
   select t.visit_id as visit, min(r.at) as at from records r join tasks t on t.id = r.task_id
-  where t.group_id = $1 and r.outcome <> 'undone' and not exists (select 1 from records u where u.corrects_id = r.id)
+  where t.group_id = $1 and r.outcome in ('done', 'lost') and not exists (select 1 from records u where u.corrects_id = r.id)
   group by t.visit_id`;
 
 /** Works out what moving a task does to the others; nothing is written. */
@@ -106,7 +106,7 @@ function calendar(deps: Deps, source: PlanSource, effects: readonly MoveEffect[]
   );
 }
 
-/** Moves a task and what hangs on it, with reminders and audit entry, in one transaction. */
+/** Moves a task and what hangs on it, with reminders and audit entry, in one transaction. To the same time: nothing. */
 export async function moveTask(
   deps: Deps,
   actor: Actor,
@@ -117,11 +117,12 @@ export async function moveTask(
     const found = await Task.findByPk(taskId, { transaction, rejectOnEmpty: true });
     const cohort = await Cohort.findByPk(found.cohortId, {
       transaction,
-      lock: transaction.LOCK.UPDATE,
+      lock: transaction.LOCK.NO_KEY_UPDATE,
       rejectOnEmpty: true,
     });
     const move = await workOutMove(deps, taskId, input, transaction);
-    if (!move.canMove && move.effects.length > 0) {
+    if (move.effects.length === 0) return cohort.id;
+    if (!move.canMove) {
       const view = presentFindings(move.findings, { zone: cohort.zone, body: move.source.cohort.body });
       throw new AppError('refused', t('server.task.stopped'), undefined, view);
     }

@@ -7,12 +7,12 @@ import type { Input } from '@/shared/routes';
 import { clock } from '@/shared/when';
 import type { Deps } from '../deps';
 import { failure } from '../http/errors';
-import { Enrolment, Task, WorkRecord } from '../models';
+import { Cohort, Enrolment, Task, WorkRecord } from '../models';
 import type { Actor } from '../policies/actor';
 import { rows } from '../queries/rows';
 import { liveRecords, taskById, type TaskRow } from '../queries/tasks';
 import { recordSteps } from './recordSteps';
-import { settleTask } from './settleTask';
+import { settleGroup, settleTask } from './settleTask';
 
 type RecordInput = Input<'POST /api/tasks/:taskId/records'>['body']['records'][number];
 export interface Recorded {
@@ -20,9 +20,14 @@ export interface Recorded {
   refused: { id: string; message: string }[];
 }
 
-/** Locks the task, so that two phones can't record the same animal at once, and reads where it stands. */
+/**
+ * Locks the cohort and the task, so that two phones can't record the same animal at once, and reads where it stands.
+ * The cohort comes first, as it does for whoever moves or cancels, or the two could wait for each other.
+ */
 export async function lockedTask(deps: Deps, taskId: string, transaction: Transaction): Promise<TaskRow> {
-  await Task.findByPk(taskId, { transaction, lock: transaction.LOCK.UPDATE, rejectOnEmpty: true });
+  const found = await Task.findByPk(taskId, { transaction, rejectOnEmpty: true });
+  await Cohort.findByPk(found.cohortId, { transaction, lock: transaction.LOCK.NO_KEY_UPDATE });
+  await Task.findByPk(taskId, { transaction, lock: transaction.LOCK.NO_KEY_UPDATE, rejectOnEmpty: true });
   const task = await taskById(deps, taskId, transaction);
   if (!task) throw failure('notFound', 'server.notFound');
   return task;
@@ -33,6 +38,7 @@ interface Standing {
   animals: Set<string>;
   recorded: Map<string, { by: string; at: Date }>;
   known: Map<string, { taskId: string; animalId: string | null }>;
+  batches: Set<string>;
   left: number;
 }
 
@@ -56,8 +62,15 @@ async function standing(deps: Deps, task: TaskRow, ids: readonly string[], tx: T
     [ids],
     tx,
   );
+  const batches = await rows<{ id: string }>(
+    deps,
+    'select id from product_batches where property_id = $1',
+    [task.propertyId],
+    tx,
+  );
   return {
     task,
+    batches: new Set(batches.map((row) => row.id)),
     animals: new Set(animals.map((row) => row.id)),
     recorded: new Map(recorded.map((row) => [row.animalId, row])),
     known: new Map(known.map((row) => [row.id, row])),
@@ -74,6 +87,8 @@ function refusal(record: RecordInput, s: Standing, now: Date): [MessageKey, Mess
   if (Date.parse(record.at) > now.getTime() + clockAhead) return ['server.record.future', {}];
   const steps = new Set(s.task.steps.map((step) => step.id));
   if (record.exceptions?.some((exception) => !steps.has(exception.stepId))) return ['server.record.unknownStep', {}];
+  if (record.batchId && !s.batches.has(record.batchId)) return ['server.record.unknownBatch', {}];
+  if (!isSeenRightly(record, s.task)) return ['server.record.unknownResult', {}];
   if (s.task.headOnly !== null) {
     if (record.animalId !== null) return ['server.record.noAnimal', {}];
     return record.head > s.left ? ['server.record.tooMany', { left: s.left }] : null;
@@ -82,6 +97,14 @@ function refusal(record: RecordInput, s: Standing, now: Date): [MessageKey, Mess
   const before = s.recorded.get(record.animalId);
   if (before) return ['server.record.already', { name: before.by, clock: clock(before.at.getTime(), s.task.zone) }];
   return s.animals.has(record.animalId) ? null : ['server.record.notInGroup', {}];
+}
+
+/** What was seen must be one of the results that this visit looks for. */
+function isSeenRightly(record: RecordInput, task: TaskRow): boolean {
+  const looks = new Map(task.steps.flatMap(({ observation }) => (observation ? [[observation.id, observation]] : [])));
+  return Object.entries(record.observed ?? {}).every(([id, result]) =>
+    looks.get(id)?.results.some((known) => known.id === result),
+  );
 }
 
 /**
@@ -171,18 +194,20 @@ async function write(
   await leave(deps, task, records, transaction);
 }
 
-/** Animals that leave the program are out of every later task. */
+/** Animals that leave the program are out of every task in which they are not recorded. */
 async function leave(
   deps: Deps,
   task: TaskRow,
   records: readonly RecordInput[],
   transaction: Transaction,
 ): Promise<void> {
-  for (const record of records.filter((r) => r.outcome === 'withdrawn' && r.animalId))
+  const left = records.filter((record) => record.outcome === 'withdrawn' && record.animalId);
+  for (const record of left)
     await Enrolment.update(
       { leftAt: deps.now(), leftReason: record.reason ?? 'other' },
       { where: { groupId: task.groupId, animalId: record.animalId ?? '' }, transaction },
     );
+  if (left.length > 0) await settleGroup(deps, task.groupId, transaction);
 }
 
 /** A name-based UUID (RFC 9562, version 8, SHA-256): the same act on the same animal always has the same id. */
@@ -209,11 +234,12 @@ export async function recordRest(deps: Deps, actor: Actor, taskId: string, input
           )
         : [];
     const left = task.head - task.done;
-    const repeated = await WorkRecord.count({
+    const before = await WorkRecord.findAll({
+      attributes: ['id'],
       where: { id: await repeatIds(deps, task, input.id, transaction) },
       transaction,
     });
-    if (repeated > 0 && left === 0) return { accepted: [input.id], refused: [] };
+    if (before.length > 0) return { accepted: before.map((record) => record.id), refused: [] };
     if (left !== input.expectedHead) throw failure('conflict', 'server.record.restChanged', { left });
     const common = { outcome: 'done' as const, at: input.at, ...(input.batchId ? { batchId: input.batchId } : {}) };
     const records =
@@ -268,6 +294,7 @@ export async function undoRecord(deps: Deps, actor: Actor, recordId: string, inp
         { leftAt: null, leftReason: null },
         { where: { groupId: task.groupId, animalId: record.animalId }, transaction },
       );
+    if (record.outcome === 'withdrawn') await settleGroup(deps, task.groupId, transaction);
     await settleTask(deps, task, transaction);
     return task.id;
   });

@@ -10,12 +10,13 @@ import { Cohort, Property, Task } from '../models';
 import type { Actor } from '../policies/actor';
 import { presentFindings } from '../presenters/findings';
 import { headOf, readPlanSource } from '../queries/planSource';
+import { rows } from '../queries/rows';
 import { makePlan, type MadeTask } from './makePlan';
 import { planReminders } from './planReminders';
 
 /**
  * Starts a cohort from the plan that was looked at: in one transaction its tasks, reminders and audit entry. Refused
- * when the plan has become another since, or while a stop stands. Starting it again changes nothing.
+ * when the plan has become another since, or while a stop stands. Starting it again from the same plan changes nothing.
  */
 export async function startCohort(
   deps: Deps,
@@ -26,9 +27,13 @@ export async function startCohort(
   await deps.sequelize.transaction(async (transaction) => {
     const found = await Cohort.findByPk(id, { transaction, rejectOnEmpty: true });
     // one start at a time at a property, or two could take the same animal
-    await Property.findByPk(found.propertyId, { transaction, lock: transaction.LOCK.UPDATE });
-    const cohort = await Cohort.findByPk(id, { transaction, lock: transaction.LOCK.UPDATE, rejectOnEmpty: true });
-    if (cohort.state === 'running') return;
+    await Property.findByPk(found.propertyId, { transaction, lock: transaction.LOCK.NO_KEY_UPDATE });
+    const cohort = await Cohort.findByPk(id, {
+      transaction,
+      lock: transaction.LOCK.NO_KEY_UPDATE,
+      rejectOnEmpty: true,
+    });
+    if (cohort.state === 'running' && (await startedFrom(deps, id, seen.fingerprint, transaction))) return;
     if (cohort.state !== 'planning') throw failure('refused', 'server.cohort.notPlanning');
     if (cohort.revision !== seen.revision) throw failure('stale', 'server.cohort.stale');
     const source = await readPlanSource(deps, id, transaction);
@@ -63,6 +68,17 @@ export async function startCohort(
       detail: { fingerprint: plan.fingerprint },
     });
   });
+}
+
+/** Whether it was this very plan that the cohort was started from: then the request is a repeat. */
+async function startedFrom(deps: Deps, id: string, fingerprint: string, tx: Transaction): Promise<boolean> {
+  const found = await rows<{ id: string }>(
+    deps,
+    `select id from audit_entries where cohort_id = $1 and action = 'cohort.start' and detail->>'fingerprint' = $2`,
+    [id, fingerprint],
+    tx,
+  );
+  return found.length > 0;
 }
 
 async function writeTasks(

@@ -1,6 +1,6 @@
 import type { ErrorRequestHandler } from 'express';
 import type {} from 'pino-http';
-import { ZodError } from 'zod';
+import type { ZodError } from 'zod';
 
 import type { ApiError, FindingView } from '@/shared/contracts/common';
 import { t, type MessageKey, type MessageParams } from '@/shared/messages';
@@ -46,7 +46,7 @@ export const failure = (id: ErrorId, key: MessageKey, params: MessageParams = {}
 export const badField = (path: string, message: string): AppError =>
   new AppError('invalid', t('server.invalid'), [{ path, message }]);
 
-/** Zod's issues as fields with their path; unknown keys are named one by one. */
+/** Zod's issues with a request as fields with their path; unknown keys are named one by one. */
 export function fromZod(error: ZodError): AppError {
   const fields = error.issues.flatMap((issue): Field[] => {
     const path = issue.path.join('.');
@@ -81,7 +81,6 @@ const down = new Set([
 /** What an unexpected error is to people: the database being away is said, everything else is a plain 500. */
 export function toAppError(error: unknown): AppError {
   if (error instanceof AppError) return error;
-  if (error instanceof ZodError) return fromZod(error);
   const failed = (typeof error === 'object' && error !== null ? error : {}) as Failed;
   if (failed.type === 'entity.too.large') return failure('invalid', 'server.tooLarge');
   if (failed.type === 'entity.parse.failed') return failure('invalid', 'server.notJson');
@@ -94,6 +93,8 @@ export function toAppError(error: unknown): AppError {
     return failure('unavailable', 'server.databaseDown');
   if (code === '23505') return failure('conflict', 'server.alreadyThere');
   if (failed.status === 404) return failure('notFound', 'server.notFound');
+  // Express and its parsers: an address that can't be decoded, a body in an unknown encoding, a request cut off
+  if (Number(failed.status) >= 400 && Number(failed.status) < 500) return failure('invalid', 'server.unreadable');
   return failure('server', 'server.unexpected');
 }
 
@@ -110,5 +111,5 @@ export const errorHandler: ErrorRequestHandler = (error, req, res, _next) => {
       requestId: String(req.id ?? ''),
     },
   };
-  res.status(known.status).json(body);
+  res.status(known.status).set('Cache-Control', 'no-store').json(body);
 };

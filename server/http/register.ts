@@ -1,6 +1,6 @@
 import express, { type Express, type Request, type RequestHandler, type Response } from 'express';
 import { rateLimit, ipKeyGenerator } from 'express-rate-limit';
-import type { ZodType } from 'zod';
+import { ZodError, type ZodType } from 'zod';
 
 import { routes, type RouteName } from '@/shared/routes';
 import type { RouteSpec } from '@/shared/routes/spec';
@@ -10,7 +10,7 @@ import type { Actor } from '../policies/actor';
 import { authorise } from '../policies/authorise';
 import { loadActor } from '../policies/loadActor';
 import { locate } from '../policies/locate';
-import { failure } from './errors';
+import { failure, fromZod } from './errors';
 import type { Handlers, HandlerRequest, Place } from './handler';
 
 type AnyHandler = (request: HandlerRequest<RouteName>) => Promise<unknown>;
@@ -42,8 +42,9 @@ export function register(app: Express, deps: Deps, sessions: Sessions, handlers:
     const [method = '', path = ''] = name.split(' ');
     const handler = handlers[name] as AnyHandler;
     const verb = method.toLowerCase() as 'get' | 'post' | 'put' | 'patch' | 'delete';
-    app[verb](path, limits[spec.limit ?? 'general'], spec.limit === 'upload' ? large : small, async (req, res) => {
+    app[verb](path, limits[spec.limit ?? 'general'], async (req, res) => {
       const actor = await authenticate(req, res, deps, sessions, spec);
+      await readBody(spec.limit === 'upload' ? large : small, req, res);
       const input = validate(req, spec);
       const place = await judge(deps, actor, spec, input);
       const output = await handler({ input: input as never, actor, place, deps, req, res });
@@ -67,6 +68,10 @@ async function authenticate(
   return loadActor(deps.pool, { id: user.id, name: user.name, email: user.email }, deps.now());
 }
 
+/** Reads the body only now: from who is not let in, nothing is read. */
+const readBody = (parser: RequestHandler, req: Request, res: Response): Promise<void> =>
+  new Promise((resolve, reject) => void parser(req, res, (error?: unknown) => (error ? reject(error) : resolve())));
+
 interface Parts {
   params: Record<string, unknown> | undefined;
   query: Record<string, unknown> | undefined;
@@ -85,7 +90,8 @@ function validate(req: Request, spec: RouteSpec): Parts {
   } catch (error) {
     // an id that is no id can't be anybody's
     if (spec.params && !spec.params.safeParse(req.params).success) throw failure('notFound', 'server.notFound');
-    throw error;
+    // only here is it the caller who was wrong: any other ZodError is a fault of the server
+    throw error instanceof ZodError ? fromZod(error) : error;
   }
 }
 
@@ -99,17 +105,13 @@ async function judge(deps: Deps, actor: Actor | null, spec: RouteSpec, input: Pa
 
 function present(res: Response, spec: RouteSpec, output: unknown, deps: Deps): void {
   if (res.headersSent) return;
+  // a handler may have set another status, as health does when the database is away
+  if (res.statusCode === 200) res.status(spec.status ?? 200);
   if ('media' in spec.output) {
-    res
-      .status(spec.status ?? 200)
-      .type(spec.output.media)
-      .send(output as string);
+    res.type(spec.output.media).send(output as string);
     return;
   }
   // outside production a contract that is not kept fails the request; in production it is trusted
   const body = deps.env.NODE_ENV === 'production' ? output : spec.output.parse(output);
-  res
-    .status(spec.status ?? 200)
-    .set('Cache-Control', 'no-store')
-    .json(body);
+  res.set('Cache-Control', 'no-store').json(body);
 }

@@ -5,18 +5,27 @@ import express, { type Express, type RequestHandler } from 'express';
 
 const hashedFor = 'public, max-age=31536000, immutable';
 
+/** The path as a file name; the folder itself, which is no file, when it can't be decoded. */
+function decoded(url: string): string {
+  try {
+    return path.posix.normalize(decodeURIComponent(url));
+  } catch {
+    return '/';
+  }
+}
+
 /** Sends `file.br` or `file.gz` when the build made one and the browser takes it. */
 function precompressed(root: string): RequestHandler {
   return (req, res, next) => {
     if (req.method !== 'GET' && req.method !== 'HEAD') return next();
     const encoding = req.acceptsEncodings(['br', 'gzip']);
     const ending = encoding === 'br' ? '.br' : encoding === 'gzip' ? '.gz' : null;
-    const clean = path.posix.normalize(decodeURIComponent(req.path));
+    const clean = decoded(req.path);
     const file = path.join(root, clean);
     if (!ending || !file.startsWith(root + path.sep) || !existsSync(file + ending)) return next();
     res.set({ 'Content-Encoding': encoding as string, Vary: 'Accept-Encoding' });
     res.type(path.extname(clean));
-    req.url = clean + ending;
+    req.url = req.path + ending;
     return next();
   };
 }

@@ -1,6 +1,6 @@
 import type pg from 'pg';
 
-import { may, type Ability, type Role } from '@/shared/abilities';
+import { may, type Ability } from '@/shared/abilities';
 import { failure } from '../http/errors';
 import type { Actor } from './actor';
 import type { Located } from './locate';
@@ -9,16 +9,27 @@ import type { Located } from './locate';
 export const propertiesWith = (actor: Actor, ability: Ability): string[] =>
   [...actor.properties].filter(([, held]) => may(held.roles, ability)).map(([id]) => id);
 
-/** Organisations that are engaged, now, at any property of the person. */
-export async function engagedOrganisations(pool: pg.Pool, actor: Actor, now: Date): Promise<Set<string>> {
-  const { rows } = await pool.query<{ organisation_id: string }>({
+/** An organisation that is engaged now at a property. */
+interface Engaged {
+  organisationId: string;
+  propertyId: string;
+}
+
+async function engagements(pool: pg.Pool, actor: Actor, now: Date): Promise<Engaged[]> {
+  const { rows } = await pool.query<Engaged>({
     name: 'engaged',
-    text: `select distinct e.organisation_id from engagements e join properties p on p.id = e.property_id
+    text: `select e.organisation_id as "organisationId", e.property_id as "propertyId"
+      from engagements e join properties p on p.id = e.property_id
       where e.property_id = any($1) and e.from_date <= ($2::timestamptz at time zone p.zone)::date
         and (e.to_date is null or e.to_date >= ($2::timestamptz at time zone p.zone)::date)`,
     values: [[...actor.properties.keys()], now],
   });
-  return new Set(rows.map((row) => row.organisation_id));
+  return rows;
+}
+
+/** Organisations that are engaged, now, at any property of the person. */
+export async function engagedOrganisations(pool: pg.Pool, actor: Actor, now: Date): Promise<Set<string>> {
+  return new Set((await engagements(pool, actor, now)).map(({ organisationId }) => organisationId));
 }
 
 /**
@@ -33,29 +44,31 @@ export async function authorise(
   now: Date,
 ): Promise<void> {
   if (!place) throw failure('notFound', 'server.notFound');
-  const held = place.propertyId
-    ? actor.properties.get(place.propertyId)?.roles
-    : await organisationRoles(pool, actor, place, now);
-  if (!held) throw failure('notFound', 'server.notFound');
-  if (!may(held, ability)) throw failure('forbidden', 'server.forbidden');
+  if (place.propertyId) {
+    const held = actor.properties.get(place.propertyId)?.roles;
+    if (!held) throw failure('notFound', 'server.notFound');
+    if (!may(held, ability)) throw failure('forbidden', 'server.forbidden');
+    return;
+  }
+  const own = actor.organisations.get(place.organisationId ?? '');
+  if (own ? may(own, ability) : await readsAsClient(pool, actor, ability, place, now)) return;
+  throw failure('forbidden', 'server.forbidden');
 }
 
 /**
- * Roles towards an organisation's record: one's own roles in it, or, where it is engaged at one's property, those
- * held at the property. Such people never see a working copy.
+ * People at a property that engages the organisation see what it signed off, never a working copy, and may read it by
+ * the roles that they have at that very property. Nothing of the organisation is theirs to change.
  */
-async function organisationRoles(
+async function readsAsClient(
   pool: pg.Pool,
   actor: Actor,
+  ability: Ability,
   place: Located,
   now: Date,
-): Promise<readonly Role[] | undefined> {
-  const own = actor.organisations.get(place.organisationId ?? '');
-  if (own) return own;
-  if (place.signedOff === false) return undefined;
-  const engaged = await engagedOrganisations(pool, actor, now);
-  if (!place.organisationId || !engaged.has(place.organisationId)) return undefined;
-  // a vet of one practice is no vet of another: only what the person is at the property itself counts
-  const roles = [...actor.properties.values()].flatMap((held) => held.roles).filter((role) => role !== 'vet');
-  return roles.length > 0 ? roles : ['calendarOnly'];
+): Promise<boolean> {
+  if (place.signedOff === false) throw failure('notFound', 'server.notFound');
+  const there = (await engagements(pool, actor, now)).filter((held) => held.organisationId === place.organisationId);
+  if (there.length === 0) throw failure('notFound', 'server.notFound');
+  const roles = there.flatMap(({ propertyId }) => actor.properties.get(propertyId)?.roles ?? []);
+  return ability === 'protocol.read' && may(roles, ability);
 }

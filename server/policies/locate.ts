@@ -15,20 +15,22 @@ const owners: Record<OwnedParam, string> = {
   membershipId: 'select property_id, organisation_id from memberships where id = $1 and ended_at is null',
   invitationId:
     'select property_id, organisation_id from invitations where id = $1 and accepted_at is null and withdrawn_at is null',
-  protocolId: 'select null::uuid as property_id, organisation_id from protocols where id = $1',
-  versionId: `select null::uuid as property_id, p.organisation_id, v.state from protocol_versions v
-    join protocols p on p.id = v.protocol_id where v.id = $1`,
+  protocolId: `select null::uuid as property_id, p.organisation_id, exists (
+      select from protocol_versions v where v.protocol_id = p.id and v.state <> 'workingCopy') as signed_off
+    from protocols p where p.id = $1`,
+  versionId: `select null::uuid as property_id, p.organisation_id, v.state <> 'workingCopy' as signed_off
+    from protocol_versions v join protocols p on p.id = v.protocol_id where v.id = $1`,
 };
 
 export interface Located extends Place {
-  /** For a version: whether people outside its organisation may read it. */
+  /** For a version, and for a protocol by any of its versions: whether people outside its organisation may read it. */
   signedOff?: boolean;
 }
 
 interface Row {
   property_id: string | null;
   organisation_id: string | null;
-  state?: string;
+  signed_off?: boolean;
 }
 
 /** The owner of an id; null when there is no such record. */
@@ -39,6 +41,6 @@ export async function locate(pool: pg.Pool, param: OwnedParam, id: string): Prom
   return {
     ...(row.property_id ? { propertyId: row.property_id } : {}),
     ...(row.organisation_id ? { organisationId: row.organisation_id } : {}),
-    ...(row.state ? { signedOff: row.state !== 'workingCopy' } : {}),
+    ...(row.signed_off === undefined ? {} : { signedOff: row.signed_off }),
   };
 }

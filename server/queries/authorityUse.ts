@@ -20,6 +20,8 @@ export interface AuthorityUse {
   classes: AnimalClass[];
   head: number;
   used: number;
+  /** The part of `used` that belongs to other cohorts: what a cohort used itself still covers it. */
+  usedElsewhere: number;
   validFrom: string;
   validTo: string;
   meatDays: number | null;
@@ -33,22 +35,31 @@ export interface AuthorityUse {
 
 /**
  * Head is animals, not doses: an animal that gets the same medicine twice counts once. A group without ids counts
- * the most head that any one of its tasks recorded.
+ * the most head that any one act of its tasks recorded. Read from the property's tasks, so that other properties'
+ * records are never touched.
  */
 const usedSql = `
-  select authority_id, (count(distinct animal_id) + coalesce(max(by_task) filter (where animal_id is null), 0))::int as used
-  from (
-    select s.authority_id, r.animal_id,
-      case when r.animal_id is null then sum(r.head) over (partition by s.authority_id, r.task_id, s.step_id, s.item, (r.animal_id is null)) end as by_task
-    from record_steps s join records r on r.id = s.record_id
-    where s.authority_id is not null and s.outcome = 'done'
+  with given as (
+    select s.authority_id, t.cohort_id, t.group_id, r.task_id, s.step_id, s.item, r.animal_id, r.head
+    from tasks t join records r on r.task_id = t.id join record_steps s on s.record_id = r.id
+    where t.property_id = $1 and s.authority_id is not null and s.outcome = 'done'
       and not exists (select 1 from records u where u.corrects_id = r.id)
-      and s.authority_id in (select id from authorities where property_id = $1)
-  ) used group by authority_id`;
+  )
+  select authority_id, sum(head)::int as used, sum(elsewhere)::int as elsewhere from (
+    select authority_id, count(distinct animal_id) as head,
+      count(distinct animal_id) filter (where cohort_id is distinct from $2::uuid) as elsewhere
+    from given where animal_id is not null group by authority_id
+    union all
+    select authority_id, max(head), coalesce(max(head) filter (where cohort_id is distinct from $2::uuid), 0) from (
+      select authority_id, cohort_id, group_id, sum(head) as head from given where animal_id is null
+      group by authority_id, cohort_id, group_id, task_id, step_id, item) by_act
+    group by authority_id, group_id
+  ) counted group by authority_id`;
 
 const sql = `
   select a.id, a.cohort_id as "cohortId", a.active, a.product_id as "productId", p.name as product, p.strength, p.per,
-    a.amount, a.unit, a.route, a.classes, a.head, coalesce(u.used, 0) as used, a.valid_from as "validFrom",
+    a.amount, a.unit, a.route, a.classes, a.head, coalesce(u.used, 0) as used,
+    coalesce(u.elsewhere, 0) as "usedElsewhere", a.valid_from as "validFrom",
     a.valid_to as "validTo", a.meat_days as "meatDays", a.milk_hours as "milkHours", a.directions,
     a.issued_by as "issuedBy", w.name as "issuedByName", a.issued_at as "issuedAt", a.withdrawn_at as "withdrawnAt"
   from authorities a
@@ -62,7 +73,7 @@ const sql = `
 export const authoritiesOf = (deps: Deps, propertyId: string, cohortId: string | null, tx?: Transaction) =>
   rows<AuthorityUse>(deps, sql, [propertyId, cohortId], tx);
 
-/** What an authority still permits, for the core. Withdrawn ones permit nothing. */
+/** What an authority permits a cohort, for the core: its head less what others used. Withdrawn ones permit nothing. */
 export const permissionsOf = (authorities: readonly AuthorityUse[]): Permission[] =>
   authorities
     .filter((authority) => authority.withdrawnAt === null)
@@ -71,7 +82,7 @@ export const permissionsOf = (authorities: readonly AuthorityUse[]): Permission[
       amount: a.amount,
       unit: a.unit,
       classes: a.classes,
-      headLeft: a.head - a.used,
+      headLeft: a.head - a.usedElsewhere,
       validFrom: a.validFrom,
       validTo: a.validTo,
     }));

@@ -116,6 +116,13 @@ function decode(after: string): [string, string] {
   return [at, id];
 }
 
+/** A cohort that is being planned has its findings from the plan as it would be made now: nothing of it is written. */
+async function withPlan(deps: Deps, row: SummaryRow): Promise<CohortSummary> {
+  if (row.state !== 'planning') return summary(row);
+  const { findings } = makePlan(await readPlanSource(deps, row.id), deps.now());
+  return summary({ ...row, findings });
+}
+
 /** Cohorts of every property where the person may see them. */
 export async function listCohorts(
   deps: Deps,
@@ -132,7 +139,10 @@ export async function listCohorts(
   );
   const page = found.slice(0, query.limit);
   const last = page.at(-1);
-  return { items: page.map(summary), next: found.length > query.limit && last ? encode(last) : null };
+  return {
+    items: await Promise.all(page.map((row) => withPlan(deps, row))),
+    next: found.length > query.limit && last ? encode(last) : null,
+  };
 }
 
 /** A plan as it travels, with words. */

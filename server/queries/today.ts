@@ -54,9 +54,9 @@ export async function readToday(
       deps,
       `t.id in (select distinct on (n.property_id) n.id from tasks n join cohorts nc on nc.id = n.cohort_id
         where n.property_id = any($1) and nc.state = 'running' and n.state in ('planned', 'inWork')
-          and n.due_at >= (date_trunc('day', $2::timestamptz at time zone n.zone) + interval '1 day') at time zone n.zone
+          and n.due_at >= (coalesce($3::date, ($2::timestamptz at time zone n.zone)::date) + 1)::timestamp at time zone n.zone
         order by n.property_id, n.due_at)`,
-      [ids, new Date(middle)],
+      [ids, now, query.date ?? null],
     ),
   ]);
   return {
@@ -97,7 +97,8 @@ export async function readCalendar(
       and (t.due_at at time zone t.zone)::date between $2::date and $3::date`,
     [ids, query.from, to],
   );
-  const years = [...new Set([Number(query.from.slice(0, 4)), Number(to.slice(0, 4))])];
+  const [first, last] = [Number(query.from.slice(0, 4)), Number(to.slice(0, 4))];
+  const years = Array.from({ length: Math.max(0, last - first + 1) }, (_, i) => first + i);
   const holidays = await Promise.all(
     places.map(async (place) =>
       (await holidaysOf(place.country, place.region, years))

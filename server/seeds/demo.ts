@@ -1,5 +1,5 @@
 import { addDays } from '@/protocols/time/dates';
-import { localDate } from '@/protocols/time/zoned';
+import { localDate, toLocal } from '@/protocols/time/zoned';
 import type { AnimalClass } from '@/protocols/types';
 import { createCohort } from '../commands/editCohort';
 import { makePlan } from '../commands/makePlan';
@@ -43,7 +43,7 @@ async function begin(
   name: string,
   versionId: string,
   local: string,
-  visit: string,
+  visit: string | null,
   groups: Group[],
 ): Promise<string> {
   return createCohort(deps, await actorOf(deps, by), property.id, {
@@ -122,7 +122,7 @@ async function seedBrindleGap(deps: Deps, versions: DemoVersions): Promise<void>
     'out',
     [
       { name: 'Main mob', class: 'heifer', animalIds: heifers.slice(0, 156) },
-      { name: 'Late heifers', class: 'heifer', animalIds: heifers.slice(156), local: `${today}T14:00` },
+      { name: 'Late heifers', class: 'heifer', animalIds: heifers.slice(156), local: nextYarding(deps.now(), zone) },
     ],
   );
   await seedAuthorities({
@@ -138,6 +138,15 @@ async function seedBrindleGap(deps: Deps, versions: DemoVersions): Promise<void>
   await done(deps, 'staff', await taskOf(name, 'Main mob', 'in'));
   await done(deps, 'staff', await taskOf(name, 'Late heifers', 'in'));
   await pullDevices(deps, await taskOf(name, 'Main mob', 'out'), heifers.slice(0, 156));
+}
+
+/** A time a little ahead within the yard hours, so that Today has something to begin whenever the demo is opened. */
+function nextYarding(now: Date, zone: string): string {
+  const local = toLocal(now.getTime(), zone);
+  const hour = Number(local.slice(11, 13));
+  if (hour < 5) return `${local.slice(0, 10)}T07:00`;
+  if (hour <= 16) return `${local.slice(0, 10)}T${String(hour + 1).padStart(2, '0')}:30`;
+  return `${addDays(local.slice(0, 10), 1)}T07:00`;
 }
 
 /** 153 of 156 devices out, two lost, one animal unaccounted for (tag 0412). */
@@ -215,25 +224,9 @@ async function seedBallywhin(deps: Deps, versions: DemoVersions): Promise<void> 
   await done(deps, 'dairy', await taskOf('Weekly list 1', 'Pen 2', 'pg'));
 }
 
-/** Cows with calves at Heron Slough: being planned, the authority two head short; and a mob of last season. */
-async function seedHeronSlough(deps: Deps, versions: DemoVersions): Promise<void> {
+/** Replacements of the season before, as a head count, all done. */
+async function seedLastSeason(deps: Deps, versions: DemoVersions): Promise<void> {
   const { zone, id: propertyId } = heronSlough;
-  const today = localDate(deps.now().getTime(), zone);
-  const cows = await seedMob({
-    propertyId,
-    from: 1,
-    count: 84,
-    width: 3,
-    class: 'cow',
-    breed: 'Brangus cross',
-    paddock: 'North marsh',
-    today,
-    bornDaysAgo: 2000,
-    calvedDaysAgo: { from: 44, to: 90 },
-    knownEmpty: true,
-    eids: '999840',
-  });
-  await seedMedicines(propertyId, today, false);
   const past = at(deps, new Date(deps.now().getTime() - 70 * day));
   const lastDay = localDate(past.now().getTime(), zone);
   const last = await begin(
@@ -258,6 +251,28 @@ async function seedHeronSlough(deps: Deps, versions: DemoVersions): Promise<void
   await start(past, 'south', last);
   for (const visit of ['in', 'out', 'ai'])
     await done(deps, 'south', await taskOf('Autumn replacements', 'Replacements', visit));
+}
+
+/** Cows with calves at Heron Slough: being planned, the authority two head short; and a mob of the season before. */
+async function seedHeronSlough(deps: Deps, versions: DemoVersions): Promise<void> {
+  const { zone, id: propertyId } = heronSlough;
+  const today = localDate(deps.now().getTime(), zone);
+  const cows = await seedMob({
+    propertyId,
+    from: 1,
+    count: 84,
+    width: 3,
+    class: 'cow',
+    breed: 'Brangus cross',
+    paddock: 'North marsh',
+    today,
+    bornDaysAgo: 2000,
+    calvedDaysAgo: { from: 44, to: 90 },
+    knownEmpty: true,
+    eids: '999840',
+  });
+  await seedMedicines(propertyId, today, false);
+  await seedLastSeason(deps, versions);
   const plan = await begin(
     deps,
     'south',
@@ -265,7 +280,7 @@ async function seedHeronSlough(deps: Deps, versions: DemoVersions): Promise<void
     'Cows with calves',
     versions.cows,
     `${addDays(today, 24)}T08:00`,
-    'ai',
+    null,
     [{ name: 'North marsh', class: 'cow', animalIds: cows }],
   );
   await seedAuthorities({

@@ -10,7 +10,14 @@ export const localDate = z.iso.date();
 /** Wall-clock date and time in the property's zone, `YYYY-MM-DDTHH:MM`. */
 export const localDateTime = z
   .string()
-  .regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}$/, { error: 'Give a date and time as YYYY-MM-DDTHH:MM.' });
+  .regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}$/, { error: 'Give a date and time as YYYY-MM-DDTHH:MM.' })
+  .refine(isOnTheCalendar, { error: 'There is no such date or time.' });
+
+/** Hours past 23, a 31 February: written rightly and still no time. The zone's own gaps are another matter. */
+function isOnTheCalendar(local: string): boolean {
+  const at = new Date(`${local}:00Z`);
+  return !Number.isNaN(at.getTime()) && at.toISOString().startsWith(local) && local >= '1900';
+}
 export const clockTime = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, { error: 'Give a time as HH:MM.' });
 export const name = z.string().trim().min(1, { error: 'Fill this in.' }).max(120, { error: 'At most 120 characters.' });
 export const note = z.string().trim().max(2000, { error: 'At most 2000 characters.' });

@@ -10,7 +10,7 @@ import { Field } from '../../ui/Field';
 import { Select } from '../../ui/Select';
 import { Text } from '../../ui/Text';
 import { stepName } from '../edit/words';
-import type { PartProps } from '../PartDialog';
+import type { PartProps } from '../BenchEdit';
 
 /** Name, for whom, and the two steps that everything is counted by. */
 export function DetailsDialog({ body, change, onClose }: PartProps) {

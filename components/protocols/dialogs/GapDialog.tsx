@@ -8,7 +8,7 @@ import { Field } from '../../ui/Field';
 import { Select } from '../../ui/Select';
 import { removeGap, updateGap } from '../edit/edit';
 import { stepName } from '../edit/words';
-import type { PartProps } from '../PartDialog';
+import type { PartProps } from '../BenchEdit';
 import { readFigure, writeFigure } from './figures';
 
 const units = [
@@ -16,6 +16,34 @@ const units = [
   { value: 'localDays', label: t('protocols.unitDays') },
   { value: 'milkings', label: t('protocols.unitMilkings') },
 ] as const;
+
+interface GapForm {
+  from: string;
+  to: string;
+  unit: Gap['unit'];
+  clock: string;
+}
+type Figures = Record<'least' | 'ideal' | 'most' | 'tolerance', { value: number | undefined }>;
+
+/** The gap as typed; a tolerance that was changed is the vet's own and loses the source's mark. */
+function gapOf(gap: Gap, form: GapForm, read: Figures): Gap {
+  const { least: _l, ideal: _i, most: _m, clock: _c, toleranceMinutes, toleranceMark, ...rest } = gap;
+  const inDays = form.unit === 'localDays';
+  const figure = (key: 'least' | 'ideal' | 'most') => (read[key].value === undefined ? {} : { [key]: read[key].value });
+  const sameTolerance = read.tolerance.value === toleranceMinutes;
+  return {
+    ...rest,
+    from: form.from,
+    to: form.to,
+    unit: form.unit,
+    ...figure('least'),
+    ...figure('ideal'),
+    ...figure('most'),
+    ...(inDays && form.clock ? { clock: form.clock } : {}),
+    ...(inDays && read.tolerance.value !== undefined ? { toleranceMinutes: read.tolerance.value } : {}),
+    ...(toleranceMark && sameTolerance ? { toleranceMark } : {}),
+  };
+}
 
 /** The figures of a gap. Order of least, ideal and most is the core's to judge: it says so at once in the findings. */
 export function GapDialog({ gap, body, change, onClose }: PartProps & { gap: Gap }) {
@@ -41,23 +69,7 @@ export function GapDialog({ gap, body, change, onClose }: PartProps & { gap: Gap
   const bad = Object.values(read).some((one) => one.error) || badClock !== undefined;
   const steps = body.steps.map((step) => ({ value: step.id, label: stepName(step) }));
   const done = () => {
-    const { least: _l, ideal: _i, most: _m, clock: _c, toleranceMinutes: _t, toleranceMark, ...rest } = gap;
-    const sameTolerance = read.tolerance.value === gap.toleranceMinutes;
-    const next: Gap = {
-      ...rest,
-      from: form.from,
-      to: form.to,
-      unit: form.unit,
-      ...(read.least.value === undefined ? {} : { least: read.least.value }),
-      ...(read.ideal.value === undefined ? {} : { ideal: read.ideal.value }),
-      ...(read.most.value === undefined ? {} : { most: read.most.value }),
-      ...(form.unit === 'localDays' && form.clock ? { clock: form.clock } : {}),
-      ...(form.unit === 'localDays' && read.tolerance.value !== undefined
-        ? { toleranceMinutes: read.tolerance.value }
-        : {}),
-      ...(toleranceMark && sameTolerance ? { toleranceMark } : {}),
-    };
-    change((before) => updateGap(before, gap.id, next));
+    change((before) => updateGap(before, gap.id, gapOf(gap, form, read)));
     onClose();
   };
   const figure = (key: 'least' | 'ideal' | 'most') => (

@@ -8,7 +8,7 @@ import { Field } from '../../ui/Field';
 import { Select } from '../../ui/Select';
 import { addGap, addVisit } from '../edit/edit';
 import { stepName } from '../edit/words';
-import type { PartProps } from '../PartDialog';
+import type { PartProps } from '../BenchEdit';
 
 /** A new visit begins with one step, a day after the last. */
 export function NewVisitDialog({ body, change, onClose }: PartProps) {

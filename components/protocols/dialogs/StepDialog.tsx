@@ -11,7 +11,7 @@ import { Segmented } from '../../ui/RadioGroup';
 import { Select } from '../../ui/Select';
 import { activesOf, newItems } from '../edit/defaults';
 import { removeStep, shiftStep, updateStep } from '../edit/edit';
-import type { PartProps } from '../PartDialog';
+import type { PartProps } from '../BenchEdit';
 import { choicesOf, conditionKey, conditionOf } from './conditionChoice';
 import { readFigure } from './figures';
 import { ItemFields, itemForm, type ItemForm, itemOf } from './ItemFields';

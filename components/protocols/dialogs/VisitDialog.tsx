@@ -7,7 +7,7 @@ import { Checkbox } from '../../ui/Checkbox';
 import { Dialog } from '../../ui/Dialog';
 import { Field } from '../../ui/Field';
 import { updateVisit } from '../edit/edit';
-import type { PartProps } from '../PartDialog';
+import type { PartProps } from '../BenchEdit';
 
 /** Name of a visit, and whether it goes through the yards. */
 export function VisitDialog({ visit, change, onClose }: PartProps & { visit: Visit }) {

@@ -16,8 +16,10 @@ export function itemWords(item: Item): string {
     tData(`unit.${item.unit}`, item.unit),
   );
   const per = item.per === 'kg' ? t('protocols.perKg') : '';
+  const route = tData(`route.${item.route}`, item.route);
+  if (item.unit === 'device' || item.unit === 'patch') return `${figure(item.amount ?? 1)} ${unit}, ${route}`;
   const amount = item.amount === undefined ? t('protocols.amountMissing') : `${figure(item.amount)} ${unit}${per}`;
-  return `${tData(`active.${item.active}`, item.active)} ${amount}, ${tData(`route.${item.route}`, item.route)}`;
+  return `${tData(`active.${item.active}`, item.active)} ${amount}, ${route}`;
 }
 
 /** One bound as it stands in the table: `7 d`, `52 h`, `−`. */

@@ -4,6 +4,7 @@ export const http = {
   'server.unknownField': 'There is no such field.',
   'server.tooLarge': 'That is larger than the server takes.',
   'server.notJson': 'The request is not JSON.',
+  'server.unreadable': 'The request cannot be read.',
   'server.wrongType': 'Send application/json.',
   'server.crossSite': 'This request came from another site.',
   'server.databaseDown': 'The database does not answer. Nothing was changed. Try again in a moment.',

@@ -140,7 +140,7 @@ export const protocols = {
   'protocols.confirmDoses':
     'Doses are the source’s. The vet confirms them with the label and local law before sign-off.',
   'protocols.milkings': '{count, plural, one {# milking} other {# milkings}}',
-  'protocols.days': '{count, plural, one {{range} day} other {{range} days}}',
+  'protocols.days': '{range} {count, plural, one {day} other {days}}',
   'protocols.sameClock': 'same clock hour',
   'protocols.atClock': 'at {clock}',
   'protocols.giveOrTake': 'give or take {time}',
