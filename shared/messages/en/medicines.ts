@@ -11,6 +11,7 @@ export const medicines = {
   'medicines.noBatches': 'No product batch yet',
   'medicines.noBatchesHint': 'Add batch and expiry, so that every record names what was given.',
   'medicines.balance': '{used} of {head} head used',
+  'medicines.leftOf': 'left of {head}',
   'medicines.left': '{count, plural, one {# head left} other {# head left}}',
   'medicines.valid': 'valid {from} to {to}',
   'medicines.expired': 'expired {day}',
