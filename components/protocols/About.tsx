@@ -55,7 +55,7 @@ export function About({ body, edit }: { body: ProtocolBody; edit?: BenchEdit }) 
 const Part = ({ title, lines }: { title: string; lines: string[] }) =>
   lines.length === 0 ? null : (
     <View>
-      <Text variant="subheading" level={3}>
+      <Text variant="subheading" level={2}>
         {title}
       </Text>
       {lines.map((line) => (
