@@ -1,3 +1,5 @@
+import { router } from 'expo-router';
+import { useEffect } from 'react';
 import { StyleSheet, View } from 'react-native';
 
 import { usePlan } from '@/hooks/useCohorts';
@@ -6,9 +8,8 @@ import { t } from '@/shared/messages';
 import { useWide } from '../theme/layout';
 import { color, space } from '../theme/tokens';
 import { Button } from '../ui/Button';
-import { LinkButton } from '../ui/Link';
 import { Notice } from '../ui/Notice';
-import { EmptyState, failureWords } from '../ui/states';
+import { failureWords, Loading } from '../ui/states';
 import { Text } from '../ui/Text';
 import { PlanFields } from './PlanFields';
 import { PlanView } from './PlanView';
@@ -19,19 +20,12 @@ export function PlanCohort({ cohort }: { cohort: CohortDetail }) {
   const wide = useWide();
   const plan = usePlanForm(cohort);
   const preview = usePlan(cohort.id, cohort.revision, cohort.state === 'planning');
-  if (cohort.state !== 'planning')
-    return (
-      <EmptyState
-        title={t('server.cohort.notPlanning')}
-        action={
-          <LinkButton
-            href={{ pathname: '/cohorts/[id]', params: { id: cohort.id } }}
-            label={cohort.name}
-            kind="primary"
-          />
-        }
-      />
-    );
+  const over = cohort.state !== 'planning';
+  useEffect(() => {
+    // started, here or by somebody else: its place is the cohort itself
+    if (over) router.replace({ pathname: '/cohorts/[id]', params: { id: cohort.id } });
+  }, [over, cohort.id]);
+  if (over) return <Loading />;
   return (
     <View style={wide ? styles.wide : styles.phone}>
       <View style={wide ? styles.left : null}>

@@ -1,5 +1,4 @@
 import type { UseQueryResult } from '@tanstack/react-query';
-import { router } from 'expo-router';
 import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
@@ -148,12 +147,7 @@ function StartButton({ cohort, plan, settled }: { cohort: CohortDetail; plan: Pl
         busy={start.isPending}
         error={start.error ? failureWords(start.error) : undefined}
         onClose={() => setAsking(false)}
-        onConfirm={() =>
-          start.mutate(
-            { fingerprint: plan.fingerprint, revision: cohort.revision },
-            { onSuccess: () => router.replace({ pathname: '/cohorts/[id]', params: { id: cohort.id } }) },
-          )
-        }
+        onConfirm={() => start.mutate({ fingerprint: plan.fingerprint, revision: cohort.revision })}
       />
     </View>
   );
