@@ -2,11 +2,21 @@ import { pino } from 'pino';
 
 import { createApp } from './app';
 import { openDb } from './db';
-import { loadEnv } from './env';
+import { loadEnv, type Env } from './env';
 import { toAppError } from './http/errors';
 import { migrate } from './migrate';
 
-const env = loadEnv();
+/** The environment; when it is not right the start ends with what is wrong, and no stack. */
+function environment(): Env {
+  try {
+    return loadEnv();
+  } catch (error) {
+    process.stderr.write(`${error instanceof Error ? error.message : String(error)}\n`);
+    process.exit(1);
+  }
+}
+
+const env = environment();
 const log = pino({ level: env.LOG_LEVEL });
 const db = openDb(env.DATABASE_URL);
 const done = await migrate(db.sequelize).catch((error: unknown) => {

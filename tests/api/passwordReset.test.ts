@@ -118,7 +118,9 @@ describe('setting a new password', () => {
   it('makes every other open link of the person useless', async () => {
     const first = await secretFor(person);
     await ask(person.email).expect(202);
-    const second = String((await mails(person.email)).map((mail) => mail.params.link).find((l) => !String(l).includes(first)));
+    const second = String(
+      (await mails(person.email)).map((mail) => mail.params.link).find((l) => !String(l).includes(first)),
+    );
     await reset(second.split('/').at(-1) ?? '').expect(200);
     await reset(first, 'yet another password').expect(410);
   });

@@ -53,7 +53,10 @@ describe('oneself', () => {
 
 describe('a property', () => {
   it('is changed field by field: absent leaves, null clears', async () => {
-    const changed = await manager.patch(home()).send({ milkings: ['05:00', '15:30'], weekendDays: [7] }).expect(200);
+    const changed = await manager
+      .patch(home())
+      .send({ milkings: ['05:00', '15:30'], weekendDays: [7] })
+      .expect(200);
     expect(changed.body).toMatchObject({
       name: 'Home Yards',
       yardHours: { from: '05:00', to: '21:00' },
@@ -67,7 +70,10 @@ describe('a property', () => {
   });
 
   it('names a field that is not right', async () => {
-    const answer = await manager.patch(home()).send({ yardHours: { from: '25:00', to: '21:00' } }).expect(400);
+    const answer = await manager
+      .patch(home())
+      .send({ yardHours: { from: '25:00', to: '21:00' } })
+      .expect(400);
     expect(answer.body).toMatchObject({
       error: { fields: [{ path: 'yardHours.from', message: 'Give a time as HH:MM.' }] },
     });

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 
+import { library } from '@/protocols/library';
 import type { ProtocolBody } from '@/protocols/types';
 import {
   Animal,
@@ -8,6 +9,7 @@ import {
   Group,
   Invitation,
   Membership,
+  Product,
   Protocol,
   ProtocolVersion,
   Task,
@@ -97,6 +99,16 @@ export async function buildFixture(world: World): Promise<Fixture> {
     validTo: '2026-05-31',
     issuedBy: people.vet.id,
   });
+  const product = await Product.create({
+    id: id(),
+    organisationId: practice.id,
+    name: 'Dinoprost 5 mg/mL',
+    active: 'dinoprost',
+    strength: 5,
+    unit: 'mg',
+    per: 'mL',
+    route: 'im',
+  });
   const guest = await User.create({ id: id(), email: 'guest@yard.example', name: 'Guest', passwordHash: 'x' });
   const membership = await Membership.create({
     id: id(),
@@ -130,7 +142,8 @@ export async function buildFixture(world: World): Promise<Fixture> {
       membershipId: membership.id,
       invitationId: invitation.id,
       linkId: id(),
-      libraryId: 'none',
+      libraryId: library[0]?.id ?? '',
+      productId: product.id,
       token: 'not-a-token-that-anybody-was-given',
       secret: 'not-a-secret-that-anybody-was-given.ics',
     },
@@ -210,10 +223,10 @@ export const bodies: Record<RouteName, (f: Fixture) => object | undefined> = {
     milkHours: null,
     openDays: null,
   }),
-  'POST /api/properties/:propertyId/product-batches': () => ({
+  'POST /api/properties/:propertyId/product-batches': (f) => ({
     id: randomUUID(),
-    productId: randomUUID(),
-    number: 'B1',
+    productId: f.ids.productId,
+    number: randomUUID(),
     expiry: '2027-01-01',
     quantity: 10,
   }),
