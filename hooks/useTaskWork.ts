@@ -13,6 +13,7 @@ import {
   type Send,
 } from '@/lib/outbox';
 import type { TaskWork } from '@/shared/contracts/work';
+import { applyTaken } from './applyTaken';
 import { keys } from './keys';
 import { useMe } from './useMe';
 
@@ -57,15 +58,22 @@ const send: Send = async (entry) => {
 /** Sends what is kept whenever there may be signal again: at start, back online, back in view, and every half minute. */
 export function useFlush(): () => Promise<void> {
   const client = useQueryClient();
-  const userId = useMe().data?.user.id;
+  const me = useMe().data?.user;
+  const userId = me?.id;
+  const by = me?.name ?? '';
   const flush = useCallback(async () => {
     if (!userId) return;
     const before = outboxEntries().length;
-    await flushOutbox(userId, send);
+    await flushOutbox(userId, async (entry) => {
+      const answer = await send(entry);
+      if (answer.result === 'taken')
+        client.setQueryData<TaskWork>(keys.taskWork(entry.taskId), (work) => work && applyTaken(work, entry, by));
+      return answer;
+    });
     if (outboxEntries().length !== before) {
       await client.invalidateQueries({ queryKey: keys.work() });
     }
-  }, [client, userId]);
+  }, [by, client, userId]);
   useEffect(() => {
     void loadOutbox().then(flush);
     const again = () => void flush();

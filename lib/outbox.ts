@@ -70,12 +70,17 @@ export const dismiss = (id: string): Promise<void> => change((entries) => entrie
 
 let running: Promise<void> | null = null;
 
+const waits = (userId: string) => memory.some((e) => e.state === 'waiting' && e.userId === userId);
+
 /** Sends what waits, oldest first, one at a time; stops at the first that has to wait. Never runs twice at once. */
-export function flushOutbox(userId: string, send: Send): Promise<void> {
+export async function flushOutbox(userId: string, send: Send): Promise<void> {
+  const before = running;
   running ??= drain(userId, send).finally(() => {
     running = null;
   });
-  return running;
+  await running;
+  // what came in while an earlier run was just ending has not been seen by it
+  if (before && waits(userId)) await flushOutbox(userId, send);
 }
 
 async function drain(userId: string, send: Send): Promise<void> {

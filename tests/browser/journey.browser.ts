@@ -164,11 +164,15 @@ test(
     const cohortUrl = page.url();
 
     // each reminder once: the evening before, on the morning, and before the window closes
-    const kinds = { evening: /^(Mon|Tue|Wed|Thu|Fri|Sat|Sun) /, morning: /^Due /, closing: /^Window closes .*Devices in/ };
+    const kinds = {
+      evening: /^(Mon|Tue|Wed|Thu|Fri|Sat|Sun) /,
+      morning: /^Due /,
+      closing: /^Window closes .*Devices in/,
+    };
     for (const [kind, words] of Object.entries(kinds)) {
       const mails = await mailTo(system, manager, (mail) => words.test(mail.subject));
       assert.equal(mails.length, 1, `${kind}: ${mails.map((mail) => mail.subject).join(' | ')}`);
-      assert.match(mails[0]?.text ?? '', new RegExp(property));
+      assert.match(mails[0]?.subject ?? '', new RegExp(property));
     }
 
     // a calendar link, read over HTTP by a parser that is not ours
