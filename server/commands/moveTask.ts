@@ -121,21 +121,21 @@ export async function moveTask(
       rejectOnEmpty: true,
     });
     const move = await workOutMove(deps, taskId, input, transaction);
-    if (move.effects.length === 0) return cohort.id;
+    const [moved] = move.effects;
+    if (!moved) return cohort.id;
     if (!move.canMove) {
       const view = presentFindings(move.findings, { zone: cohort.zone, body: move.source.cohort.body });
       throw new AppError('refused', t('server.task.stopped'), undefined, view);
     }
     const from = move.task.dueAt;
     for (const { task, visit } of [...move.effects, ...move.windows]) {
-      const moved = visit.at !== task.dueAt.getTime();
       await task.update(
         {
           dueAt: new Date(visit.at),
           windowFrom: new Date(visit.window.earliest),
           windowTo: new Date(visit.window.latest),
           sinceAnchorMinutes: Math.round(visit.sinceAnchorMinutes),
-          ...(moved ? { movedFrom: task.movedFrom ?? task.dueAt } : {}),
+          ...(visit.at === task.dueAt.getTime() ? {} : { movedFrom: task.movedFrom ?? task.dueAt }),
           revision: task.revision + 1,
           updatedAt: deps.now(),
         },
@@ -159,7 +159,7 @@ export async function moveTask(
         title: move.task.title,
         group: move.group,
         from: dayClock(from.getTime(), cohort.zone),
-        to: dayClock(move.task.dueAt.getTime(), cohort.zone),
+        to: dayClock(moved.visit.at, cohort.zone),
         others: move.effects.length - 1,
       }),
       detail: { tasks: move.effects.map(({ task }) => task.id) },

@@ -179,7 +179,7 @@ test(
     await page.goto(`${system.base}/people`);
     await page.getByLabel('Name of the link').fill('Phone');
     await button(page, 'Make a calendar link').click();
-    const address = await page.getByLabel('Address').inputValue();
+    const address = await page.getByRole('textbox', { name: 'Address' }).inputValue();
     const starts = async () => {
       const text = await (await fetch(address)).text();
       const calendar = new ICAL.Component(ICAL.parse(text));
