@@ -40,7 +40,12 @@ export const places: readonly Place[] = [
   { name: 'cohorts', path: () => '/cohorts', who: 'manager' },
   { name: 'cohort', path: ({ cohortId }) => `/cohorts/${cohortId}`, who: 'manager', readme: ['wide-light'] },
   { name: 'cohort-new', path: () => '/cohorts/new', who: 'manager' },
-  { name: 'cohort-plan', path: ({ planningCohortId }) => `/cohorts/${planningCohortId}/plan`, who: 'manager' },
+  {
+    name: 'cohort-plan',
+    path: ({ planningCohortId }) => `/cohorts/${planningCohortId}/plan`,
+    who: 'vet',
+    readme: ['wide-dark'],
+  },
   { name: 'calendar', path: () => '/calendar', who: 'manager' },
   { name: 'herd', path: () => '/herd', who: 'manager' },
   { name: 'herd-import', path: () => '/herd/import', who: 'manager' },

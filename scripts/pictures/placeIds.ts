@@ -15,8 +15,9 @@ export async function placeIds(base: string, manager: APIRequestContext, vet: AP
   };
   const me = (await (await manager.get(`${base}/api/me`)).json()) as { properties: { id: string }[] };
   const propertyId = me.properties[0]?.id ?? '';
-  const [cohorts, protocols, library, animals] = await Promise.all([
+  const [cohorts, plans, protocols, library, animals] = await Promise.all([
     list(manager, '/api/cohorts'),
+    list(vet, '/api/cohorts?state=planning'),
     list(vet, '/api/protocols'),
     list(vet, '/api/library'),
     list(manager, `/api/properties/${propertyId}/animals`),
@@ -25,7 +26,7 @@ export async function placeIds(base: string, manager: APIRequestContext, vet: AP
   const signedOff = protocols.find(({ current }) => current) ?? protocols[0];
   const ids = {
     cohortId: running?.id ?? '',
-    planningCohortId: cohorts.find(({ state }) => state === 'planning')?.id ?? running?.id ?? '',
+    planningCohortId: plans[0]?.id ?? '',
     taskId: running?.next?.taskId ?? '',
     protocolId: signedOff?.id ?? '',
     versionId: signedOff?.current?.id ?? '',
