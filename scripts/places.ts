@@ -32,7 +32,7 @@ export const places: readonly Place[] = [
     name: 'invitation-unknown',
     path: () => '/invitation/there-is-no-such-invitation',
     who: null,
-    expected: /status of 404/,
+    expected: /status of 410/,
   },
   { name: 'not-found', path: () => '/no/such/place', who: null },
   { name: 'today', path: () => '/', who: 'manager', readme: ['phone-light'] },
