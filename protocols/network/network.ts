@@ -18,6 +18,16 @@ export interface Network {
   bounds: readonly Bound[];
 }
 
+/** A network without bounds: every point may be at any time. */
+export const createNetwork = (points: readonly string[]): Network => ({ points: [...new Set(points)], bounds: [] });
+
+/** The same network with one bound more. Throws a RangeError for a point that is not in it. */
+export function addBound(network: Network, bound: Bound): Network {
+  for (const point of [bound.from, bound.to])
+    if (!network.points.includes(point)) throw new RangeError(`No point of the network: ${point}`);
+  return { points: network.points, bounds: [...network.bounds, bound] };
+}
+
 /** One side of a bound as an edge of the distance graph: t(to) - t(from) <= weight. */
 export interface Edge {
   from: number;
@@ -36,7 +46,7 @@ export function edgesOf(network: Network): Edge[] {
     if (from === undefined || to === undefined) return [];
     const edges: Edge[] = [];
     if (bound.most !== undefined) edges.push({ from, to, weight: bound.most, bound, side: 'most' });
-    if (bound.least !== undefined) edges.push({ from: to, to: from, weight: -bound.least, bound, side: 'least' });
+    if (bound.least !== undefined) edges.push({ from: to, to: from, weight: 0 - bound.least, bound, side: 'least' });
     return edges;
   });
 }

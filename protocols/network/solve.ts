@@ -57,5 +57,5 @@ export function between(
   const i = solution.index.get(from);
   const j = solution.index.get(to);
   if (i === undefined || j === undefined) return null;
-  return { least: -(solution.distance[j]?.[i] ?? Infinity), most: solution.distance[i]?.[j] ?? Infinity };
+  return { least: 0 - (solution.distance[j]?.[i] ?? Infinity), most: solution.distance[i]?.[j] ?? Infinity };
 }

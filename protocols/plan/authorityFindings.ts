@@ -10,6 +10,7 @@ import type {
   Zone,
 } from '../types';
 import { localDate } from '../time/zoned';
+import { allocate } from './allocate';
 import { requirements, type Need } from './doses';
 
 /** A vet's written direction in force, as far as the plan needs it. */
@@ -36,7 +37,8 @@ export interface NeedCover extends Need {
 
 /**
  * What must be authorised, and how many head the permissions in force cover on every day it is given.
- * Head is the number of animals: a permission covers every dose of its active and amount to them.
+ * Head is the number of animals: a permission covers every dose of its active and amount to them. A permission that
+ * several classes may use is shared among them, each head once, so that as many as possible are covered.
  */
 export function authorityCover(
   body: ProtocolBody,
@@ -46,76 +48,97 @@ export function authorityCover(
   zone: Zone,
   options?: Readonly<Record<string, string>>,
 ): NeedCover[] {
-  return requirements(body, groups, options)
+  const needs = requirements(body, groups, options)
     .filter((need) => !free.includes(need.active))
-    .map((need) => {
+    .map((need): NeedCover => {
       const head = groups.filter((g) => g.class === need.class).reduce((sum, g) => sum + g.head, 0);
       const moments = visits.filter((v) => v.steps.some((step) => need.steps.includes(step))).map((v) => v.at);
       const [firstAt, lastAt] = moments.length > 0 ? [Math.min(...moments), Math.max(...moments)] : [null, null];
-      const fitting = permissions.filter(
-        (p) =>
-          p.active === need.active &&
-          p.classes.includes(need.class) &&
-          p.unit === need.unit &&
-          (need.amount === null || p.amount >= need.amount) &&
-          inForce(p, firstAt, lastAt, zone),
-      );
-      return {
-        ...need,
-        head,
-        covered: Math.min(
-          head,
-          fitting.reduce((sum, p) => sum + p.headLeft, 0),
-        ),
-        firstAt,
-        lastAt,
-      };
+      return { ...need, head, covered: 0, firstAt, lastAt };
     });
+  for (const contest of contests(needs)) {
+    const covered = allocate(
+      contest.map((need) => ({ amount: need.head, supplies: fitting(need, permissions, zone) })),
+      permissions.map((permission) => permission.headLeft),
+    );
+    contest.forEach((need, i) => (need.covered = covered[i] ?? 0));
+  }
+  return needs;
 }
+
+/**
+ * Needs that share permissions: those of one active, of different classes. Two amounts of one active for one class go
+ * to the same animals, which count once, so they are not in the same contest.
+ */
+function contests(needs: readonly NeedCover[]): NeedCover[][] {
+  const lists = new Map<string, NeedCover[]>();
+  for (const need of needs) {
+    let nth = 0;
+    while (lists.get(`${need.active}|${nth}`)?.some((other) => other.class === need.class)) nth += 1;
+    const key = `${need.active}|${nth}`;
+    lists.set(key, [...(lists.get(key) ?? []), need]);
+  }
+  return [...lists.values()];
+}
+
+/** Whether a permission allows what is needed in one dose, the day aside. */
+const allows = (p: Permission, need: NeedCover): boolean =>
+  p.unit === need.unit && (need.amount === null || p.amount >= need.amount);
+
+/** Permissions (by position) that cover a need. */
+const fitting = (need: NeedCover, permissions: readonly Permission[], zone: Zone): number[] =>
+  permissions.flatMap((p, i) =>
+    p.active === need.active &&
+    p.classes.includes(need.class) &&
+    allows(p, need) &&
+    inForce(p, need.firstAt, need.lastAt, zone)
+      ? [i]
+      : [],
+  );
 
 const inForce = (p: Permission, first: Instant | null, last: Instant | null, zone: Zone): boolean =>
   (first === null || p.validFrom <= localDate(first, zone)) && (last === null || p.validTo >= localDate(last, zone));
 
 /** A cohort cannot start without permissions that cover it: each need that is not covered is a stop that says why. */
-export function authorityFindings(
+export const authorityFindings = (
   cover: readonly NeedCover[],
   permissions: readonly Permission[],
   zone: Zone,
-): Finding[] {
-  return cover
+): Finding[] =>
+  cover
     .filter((need) => need.covered < need.head)
     .map((need): Finding => {
-      const same = permissions.filter((p) => p.active === need.active);
-      const classed = same.filter((p) => p.classes.includes(need.class));
-      const current = classed.filter((p) => inForce(p, need.firstAt, need.lastAt, zone));
-      const params: Finding['params'] = {
-        active: need.active,
-        class: need.class,
-        head: need.head,
-        covered: need.covered,
-        short: need.head - need.covered,
-        ...(need.amount === null ? {} : { amount: need.amount, unit: need.unit }),
-        ...(need.firstAt === null ? {} : { firstAt: need.firstAt }),
-        ...(need.lastAt === null ? {} : { lastAt: need.lastAt }),
-      };
-      const finding = (code: Finding['code'], more: Finding['params'] = {}): Finding => ({
+      const [code, why] = reason(need, permissions, zone);
+      return {
         code,
         severity: 'stop',
         steps: need.steps,
-        params: { ...params, ...more },
-      });
-      if (same.length === 0) return finding('authorityMissing');
-      if (classed.length === 0) return finding('authorityWrongClass', { classes: same.flatMap((p) => [...p.classes]) });
-      if (current.length === 0)
-        return finding('authorityExpired', {
-          validTo:
-            classed
-              .map((p) => p.validTo)
-              .sort()
-              .at(-1) ?? '',
-        });
-      if (need.covered === 0 && current.every((p) => need.amount !== null && p.amount < need.amount))
-        return finding('authorityWrongActive', { authorised: current[0]?.amount ?? 0 });
-      return finding('authorityShort');
+        params: {
+          active: need.active,
+          class: need.class,
+          head: need.head,
+          covered: need.covered,
+          short: need.head - need.covered,
+          ...(need.amount === null ? {} : { amount: need.amount, unit: need.unit }),
+          ...(need.firstAt === null ? {} : { firstAt: need.firstAt }),
+          ...(need.lastAt === null ? {} : { lastAt: need.lastAt }),
+          ...why,
+        },
+      };
     });
+
+/** The first of the conditions that no permission meets: active, class, days, amount; else there are too few head. */
+function reason(need: NeedCover, permissions: readonly Permission[], zone: Zone): [Finding['code'], Finding['params']] {
+  const same = permissions.filter((p) => p.active === need.active);
+  if (same.length === 0) return ['authorityMissing', {}];
+  const classed = same.filter((p) => p.classes.includes(need.class));
+  if (classed.length === 0) return ['authorityWrongClass', { classes: [...new Set(same.flatMap((p) => p.classes))] }];
+  const current = classed.filter((p) => inForce(p, need.firstAt, need.lastAt, zone));
+  const latest = [...classed].sort((a, b) => (a.validTo < b.validTo ? 1 : -1))[0];
+  if (current.length === 0)
+    return ['authorityExpired', { validFrom: latest?.validFrom ?? '', validTo: latest?.validTo ?? '' }];
+  const [first] = current;
+  if (first && !current.some((p) => allows(p, need)))
+    return ['authorityWrongActive', { authorised: first.amount, authorisedUnit: first.unit }];
+  return ['authorityShort', {}];
 }

@@ -1,8 +1,11 @@
 import type { Finding, ProtocolBody } from '../types';
 import { checkReferences } from './checkReferences';
 import { checkSources } from './checkSources';
-import { observationCombinations, optionCombinations } from './conditions';
-import { nominalVisits, solveNominal, type NominalVisit } from './nominal';
+import { combinationCount, observationCombinations, optionCombinations } from './conditions';
+import { contradictions, type Met } from './contradictions';
+import { minutesPerUnit } from './gaps';
+import { nominalTimes, nominalVisits, solveNominal, type NominalVisit } from './nominal';
+import { countOf } from './occurrences';
 import { resolve, type Resolved } from './resolve';
 
 export interface Scenario {
@@ -17,14 +20,14 @@ export interface CheckResult {
   findings: Finding[];
   /** One for each allowed choice of options; then one for each branch of it, where animals are observed. */
   scenarios: Scenario[];
-  /** Visits through the yards with the default options. */
+  /** Times through the yards with the default options, repeats counted. */
   yardings: number;
   /** Days from the first to the last visit with the default options, rounded up. */
   lengthDays: number;
 }
 
-/** More choices than this are not all checked; the schema allows fewer. */
-const mostCombinations = 64;
+/** Choices of options that are checked; more are refused rather than left unchecked in silence. */
+const mostChoices = 256;
 
 /**
  * Whether a protocol is possible, for every allowed choice of options and every branch; what is wrong in it and
@@ -33,53 +36,56 @@ const mostCombinations = 64;
 export function checkProtocol(body: ProtocolBody): CheckResult {
   const findings = [...checkReferences(body), ...checkSources(body)];
   const scenarios: Scenario[] = [];
-  const seen = new Set<string>();
-  const report = (found: Finding[]) => {
-    for (const finding of found) {
-      const key = `${finding.code}|${finding.steps.join()}|${finding.visits?.join() ?? ''}`;
-      if (!seen.has(key)) findings.push(finding);
-      seen.add(key);
-    }
+  const met: Met[] = [];
+  const loose = new Map<string, Finding>();
+  const judge = (resolved: Resolved, observed: Record<string, string>) => {
+    const solution = solveNominal(resolved);
+    const { options } = resolved;
+    scenarios.push({ options, observed, consistent: solution.consistent, visits: nominalVisits(resolved) });
+    if (!solution.consistent) met.push({ cycle: solution.cycle.map(({ bound }) => bound), options, observed });
+    else keep(loose, idealsOutside(body, resolved));
   };
-  for (const options of optionCombinations(body).slice(0, mostCombinations)) {
+  for (const options of choices(body, findings)) {
     const together = resolve(body, options);
-    report([...unreachable(together), ...judge(body, together, {}, scenarios)]);
-    if (body.observations.length === 0 || body.observations.length > 3) continue;
-    for (const observed of observationCombinations(body))
-      report(judge(body, resolve(body, options, { observed }), observed, scenarios));
+    keep(loose, unreachable(together));
+    judge(together, {});
+    if (body.observations.length === 0 || combinationCount(body.observations.map((o) => o.results)) > 8) continue;
+    for (const observed of observationCombinations(body)) judge(resolve(body, options, { observed }), observed);
   }
-  const main = scenarios[0];
-  const last = main?.visits.at(-1)?.idealMinutes ?? 0;
-  const yarded = new Set(body.visits.filter((visit) => visit.yarded).map((visit) => visit.id));
-  return {
-    findings,
-    scenarios,
-    yardings: main?.visits.filter((visit) => yarded.has(visit.visit)).length ?? 0,
-    lengthDays: Math.ceil(last / 1440),
-  };
+  findings.push(...contradictions(body, met), ...loose.values());
+  return { findings, scenarios, ...size(body, scenarios[0]) };
 }
 
-function judge(body: ProtocolBody, resolved: Resolved, observed: Record<string, string>, into: Scenario[]): Finding[] {
-  const solution = solveNominal(resolved);
-  into.push({ options: resolved.options, observed, consistent: solution.consistent, visits: nominalVisits(resolved) });
-  if (solution.consistent) return idealsOutside(resolved);
-  const gaps = solution.cycle.map(({ bound }) => resolved.gaps.find((g) => g.gap.id === bound.id)?.gap);
-  const steps = gaps.flatMap((gap) => (gap ? [gap.from, gap.to] : []));
-  const first = body.gaps.findIndex((gap) => gap.id === solution.cycle[0]?.bound.id);
-  return [
-    {
-      code: 'contradiction',
+/** Every choice of options; too many are a stop, and then only the first ones are looked at. */
+function choices(body: ProtocolBody, findings: Finding[]): Record<string, string>[] {
+  const count = combinationCount(body.options.map((option) => option.values));
+  if (count > mostChoices)
+    findings.push({
+      code: 'tooManyObservations',
       severity: 'stop',
-      steps: [...new Set(steps)],
-      params: {
-        gaps: [...new Set(solution.cycle.map(({ bound }) => bound.id))],
-        options: Object.values(resolved.options),
-        observed: Object.values(observed),
-      },
-      ...(first === -1 ? {} : { path: `gaps.${first}` }),
-      source: 'Dechter, Meiri & Pearl, Temporal constraint networks (Artificial Intelligence 49, 1991)',
-    },
-  ];
+      steps: [],
+      params: { observations: body.observations.length, options: body.options.length, scenarios: count },
+      path: 'options',
+    });
+  return optionCombinations(body, mostChoices);
+}
+
+function keep(into: Map<string, Finding>, found: readonly Finding[]): void {
+  for (const finding of found) {
+    const key = [finding.code, ...finding.steps, ...(finding.visits ?? [])].join('|');
+    if (!into.has(key)) into.set(key, finding);
+  }
+}
+
+function size(body: ProtocolBody, main: Scenario | undefined): Pick<CheckResult, 'yardings' | 'lengthDays'> {
+  const visits = main?.visits ?? [];
+  const yarded = new Set(body.visits.filter((visit) => visit.yarded).map((visit) => visit.id));
+  const times = (visit: string) =>
+    Math.max(1, ...body.steps.filter((step) => step.visit === visit).map((step) => countOf(step.repeat)));
+  return {
+    yardings: visits.filter(({ visit }) => yarded.has(visit)).reduce((sum, { visit }) => sum + times(visit), 0),
+    lengthDays: Math.ceil((visits.at(-1)?.idealMinutes ?? 0) / 1440),
+  };
 }
 
 /** Visits that no chain of gaps ties to the first one: nobody could say when they are due. */
@@ -93,21 +99,23 @@ const unreachable = (resolved: Resolved): Finding[] =>
   }));
 
 /** The ideals may each be inside their own gap and yet not together: the planned line must hold too. */
-function idealsOutside(resolved: Resolved): Finding[] {
-  const times = new Map(nominalVisits(resolved).map((visit) => [visit.visit, visit.idealMinutes]));
+function idealsOutside(body: ProtocolBody, resolved: Resolved): Finding[] {
+  const times = nominalTimes(resolved);
   return resolved.gaps.flatMap(({ gap, from, to }): Finding[] => {
     const elapsed = (times.get(to) ?? 0) - (times.get(from) ?? 0);
-    const per = gap.unit === 'elapsedHours' ? 60 : gap.unit === 'localDays' ? 1440 : 720;
+    const per = minutesPerUnit[gap.unit];
     const tolerance = gap.unit === 'localDays' ? (gap.toleranceMinutes ?? 0) : 0;
     const tooShort = gap.least !== undefined && elapsed < gap.least * per - tolerance - 1e-6;
     const tooLong = gap.most !== undefined && elapsed > gap.most * per + tolerance + 1e-6;
-    if (!tooShort && !tooLong) return [];
+    // a gap whose own figures are out of order has been named already
+    if ((!tooShort && !tooLong) || (gap.least ?? -Infinity) > (gap.most ?? Infinity)) return [];
     return [
       {
         code: 'gapReversed',
         severity: 'stop',
         steps: [gap.from, gap.to],
         params: { gap: gap.id, from: gap.from, to: gap.to, elapsedMinutes: elapsed },
+        path: `gaps.${body.gaps.indexOf(gap)}`,
       },
     ];
   });

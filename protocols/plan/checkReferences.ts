@@ -1,4 +1,4 @@
-import type { Condition, Finding, FindingCode, ProtocolBody } from '../types';
+import type { Condition, Finding, FindingCode, Gap, ProtocolBody } from '../types';
 
 /** Whether everything that a body names is there, and every figure makes sense by itself. Paths point into the body. */
 export function checkReferences(body: ProtocolBody): Finding[] {
@@ -7,7 +7,10 @@ export function checkReferences(body: ProtocolBody): Finding[] {
     ...duplicates(body),
     ...stepFindings(body),
     ...gapFindings(body),
+    ...checkClocks(body),
+    ...choiceFindings(body),
     ...anchorFindings(body),
+    ...outsideFindings(body),
     ...visitFindings(body),
     ...observationFindings(body),
   ];
@@ -28,6 +31,8 @@ function duplicates(body: ProtocolBody): Finding[] {
     gaps: body.gaps,
     options: body.options,
     observations: body.observations,
+    factGaps: body.factGaps,
+    deadlines: body.deadlines,
   };
   return Object.entries(lists).flatMap(([name, list]) => {
     const seen = new Set<string>();
@@ -81,7 +86,28 @@ function conditionFindings(when: Condition | undefined, body: ProtocolBody, path
     : [stop('unknownObservation', path, { observation: when.observed, value: when.is }, [step])];
 }
 
+/** Steps of one visit are done at the same moment: a gap between them must allow that. */
+const holdsZero = ({ least, ideal, most }: Gap): boolean =>
+  (least ?? 0) <= 0 && (most ?? 0) >= 0 && (ideal === undefined || ideal === 0);
+
 const clockPattern = /^([01]\d|2[0-3]):[0-5]\d$/;
+
+/** Gaps with a clock time that is none. */
+export const checkClocks = (body: Pick<ProtocolBody, 'gaps'>): Finding[] =>
+  body.gaps.flatMap((gap, i) =>
+    gap.clock === undefined || clockPattern.test(gap.clock)
+      ? []
+      : [stop('badClock', `gaps.${i}.clock`, { gap: gap.id, clock: gap.clock }, [gap.from, gap.to])],
+  );
+
+const figuresOf = ({ id, from, to, least, ideal, most }: Gap) => ({
+  gap: id,
+  from,
+  to,
+  least: least ?? '',
+  ideal: ideal ?? '',
+  most: most ?? '',
+});
 
 function gapFindings(body: ProtocolBody): Finding[] {
   const steps = new Map(body.steps.map((step) => [step.id, step]));
@@ -92,21 +118,14 @@ function gapFindings(body: ProtocolBody): Finding[] {
     for (const end of ['from', 'to'] as const)
       if (!steps.has(gap[end])) found.push(stop('unknownStep', `${path}.${end}`, { step: gap[end] }));
     const [a, b] = [steps.get(gap.from), steps.get(gap.to)];
-    if (gap.from === gap.to || (a && b && a.visit === b.visit && (least ?? ideal ?? most ?? 0) !== 0))
+    if (gap.from === gap.to || (a && b && a.visit === b.visit && !holdsZero(gap)))
       found.push(stop('gapReversed', `${path}.to`, { gap: gap.id, from: gap.from, to: gap.to }, [gap.from, gap.to]));
     if (least === undefined && ideal === undefined && most === undefined)
-      found.push(stop('gapEmpty', path, { gap: gap.id }, [gap.from, gap.to]));
+      found.push(stop('gapEmpty', path, { gap: gap.id, from: gap.from, to: gap.to }, [gap.from, gap.to]));
     if (least !== undefined && most !== undefined && least > most)
-      found.push(stop('gapBounds', `${path}.most`, { gap: gap.id, least, most }, [gap.from, gap.to]));
+      found.push(stop('gapBounds', `${path}.most`, figuresOf(gap), [gap.from, gap.to]));
     else if (ideal !== undefined && (ideal < (least ?? ideal) || ideal > (most ?? ideal)))
-      found.push(
-        stop('gapBounds', `${path}.ideal`, { gap: gap.id, ideal, least: least ?? '', most: most ?? '' }, [
-          gap.from,
-          gap.to,
-        ]),
-      );
-    if (gap.clock !== undefined && !clockPattern.test(gap.clock))
-      found.push(stop('badClock', `${path}.clock`, { gap: gap.id, clock: gap.clock }, [gap.from, gap.to]));
+      found.push(stop('gapBounds', `${path}.ideal`, figuresOf(gap), [gap.from, gap.to]));
     found.push(...conditionFindings(gap.when, body, `${path}.when`, gap.from));
     return found;
   });
@@ -119,6 +138,52 @@ function anchorFindings(body: ProtocolBody): Finding[] {
     ...(known.has(body.serviceStep) ? [] : [stop('noService', 'serviceStep', { step: body.serviceStep })]),
     ...body.factGaps.flatMap((gap, i) =>
       known.has(gap.to) ? [] : [stop('unknownStep', `factGaps.${i}.to`, { step: gap.to })],
+    ),
+    ...body.deadlines.flatMap((deadline, i) =>
+      known.has(deadline.step) ? [] : [stop('unknownStep', `deadlines.${i}.step`, { step: deadline.step })],
+    ),
+    ...Object.keys(body.lateChoices ?? {}).flatMap((step) =>
+      known.has(step) ? [] : [stop('unknownStep', `lateChoices.${step}`, { step })],
+    ),
+  ];
+}
+
+/** Defaults and answers for the unknown that are none of the choices. */
+function choiceFindings(body: ProtocolBody): Finding[] {
+  return [
+    ...body.options.flatMap((option, i) =>
+      option.values.some((value) => value.id === option.default)
+        ? []
+        : [stop('unknownOption', `options.${i}.default`, { option: option.id, value: option.default })],
+    ),
+    ...body.observations.flatMap((seen, i) =>
+      seen.onUnknown === 'askVet' || seen.results.some((result) => result.id === seen.onUnknown)
+        ? []
+        : [stop('unknownObservation', `observations.${i}.onUnknown`, { observation: seen.id, value: seen.onUnknown })],
+    ),
+  ];
+}
+
+/** Figures of gaps from facts of the animal and from outside events. */
+function outsideFindings(body: ProtocolBody): Finding[] {
+  const wrong = (path: string, id: string, from: string, to: string, ...figures: (number | undefined)[]): Finding[] => {
+    const [least, ideal, most] = figures;
+    const known = figures.filter((figure) => figure !== undefined);
+    if (known.length === 0) return [stop('gapEmpty', path, { gap: id, from, to }, [to])];
+    return known.every((figure, k) => k === 0 || figure >= (known[k - 1] ?? figure))
+      ? []
+      : [
+          stop('gapBounds', path, { gap: id, from, to, least: least ?? '', ideal: ideal ?? '', most: most ?? '' }, [
+            to,
+          ]),
+        ];
+  };
+  return [
+    ...body.factGaps.flatMap((gap, i) =>
+      wrong(`factGaps.${i}`, gap.id, gap.fact, gap.to, gap.leastDays, undefined, gap.mostDays),
+    ),
+    ...body.deadlines.flatMap((d, i) =>
+      wrong(`deadlines.${i}`, d.id, d.event, d.step, d.leastHours, d.idealHours, d.mostHours),
     ),
   ];
 }

@@ -28,12 +28,25 @@ function combine(parts: readonly Condition[], known: Known, decides: boolean): b
   return values.includes(undefined) ? undefined : !decides;
 }
 
-/** Every allowed combination of option values, the defaults first; one empty combination without options. */
-export function optionCombinations(body: Pick<ProtocolBody, 'options'>): Record<string, string>[] {
+/** How many combinations the choices of some lists make. */
+export const combinationCount = (lists: readonly (readonly unknown[])[]): number =>
+  lists.reduce((count, list) => count * list.length, 1);
+
+/**
+ * Every allowed combination of option values, the defaults first; one empty combination without options.
+ * At most `most` of them: their number is the product of all choices.
+ */
+export function optionCombinations(
+  body: Pick<ProtocolBody, 'options'>,
+  most = Number.POSITIVE_INFINITY,
+): Record<string, string>[] {
   return body.options.reduce<Record<string, string>[]>(
     (combinations, option) => {
       const ids = [option.default, ...option.values.map((value) => value.id).filter((id) => id !== option.default)];
-      return combinations.flatMap((combination) => ids.map((id) => ({ ...combination, [option.id]: id })));
+      const grown: Record<string, string>[] = [];
+      for (const combination of combinations)
+        for (const id of ids) if (grown.length < most) grown.push({ ...combination, [option.id]: id });
+      return grown;
     },
     [{}],
   );

@@ -1,5 +1,6 @@
 import type { Active, AdministrationRoute, AnimalClass, DoseUnit, Item, ProtocolBody, Step } from '../types';
 import { holds, resolveOptions } from './conditions';
+import { countOf } from './occurrences';
 
 export interface Dose {
   stepId: string;
@@ -20,10 +21,18 @@ export function amountFor(item: Item, animalClass: AnimalClass, weightKg?: numbe
   return weightKg === undefined ? null : amount * weightKg;
 }
 
-/** What a step gives to a number of head of one class. */
-export const dosesOf = (step: Step, animalClass: AnimalClass, head: number, weightKg?: number): Dose[] =>
-  step.items.map((item) => {
-    const amount = amountFor(item, animalClass, weightKg);
+/** What a step gives to a number of head of one class, in the given occurrence (from 1) of a repeated act. */
+export const dosesOf = (
+  step: Step,
+  animalClass: AnimalClass,
+  head: number,
+  weightKg?: number,
+  occurrence = 1,
+): Dose[] =>
+  step.items.map((item, i) => {
+    // a table of amounts (FSH, falling from day to day) is that of the step's first item
+    const listed = i === 0 ? step.repeat?.amounts?.[occurrence - 1] : undefined;
+    const amount = listed ?? amountFor(item, animalClass, weightKg);
     return {
       stepId: step.id,
       active: item.active,
@@ -42,6 +51,8 @@ export interface Need {
   class: AnimalClass;
   /** Doses, counting each step of every animal: twice the head when it is given twice. */
   doses: number;
+  /** Amount of all doses in `unit`; null with `amount`. */
+  total: number | null;
   steps: string[];
 }
 
@@ -59,17 +70,42 @@ export function requirements(
   for (const group of groups) {
     for (const step of body.steps) {
       if (holds(step.when, { options: chosen, class: group.class }) === false) continue;
-      const times = step.repeat?.count ?? 1;
-      for (const dose of dosesOf(step, group.class, group.head)) {
-        const key = [dose.active, dose.amount, dose.unit, dose.route, group.class].join('|');
-        const need = needs.get(key) ?? { ...pick(dose), class: group.class, doses: 0, steps: [] };
-        need.doses += group.head * times;
-        if (!need.steps.includes(step.id)) need.steps.push(step.id);
-        needs.set(key, need);
-      }
+      for (let n = 1; n <= countOf(step.repeat); n += 1)
+        for (const dose of dosesOf(step, group.class, group.head, undefined, n)) add(needs, dose, group);
     }
   }
   return [...needs.values()];
+}
+
+function add(needs: Map<string, Need>, dose: Dose, group: { class: AnimalClass; head: number }): void {
+  const key = [dose.active, dose.amount, dose.unit, dose.route, group.class].join('|');
+  const need = needs.get(key) ?? { ...pick(dose), class: group.class, doses: 0, total: null, steps: [] };
+  need.doses += group.head;
+  need.total = need.amount === null ? null : need.amount * need.doses;
+  if (!need.steps.includes(dose.stepId)) need.steps.push(dose.stepId);
+  needs.set(key, need);
+}
+
+export interface ActiveTotal {
+  active: Active;
+  unit: DoseUnit;
+  doses: number;
+  /** Null when the amount of one of its doses is not known. */
+  total: number | null;
+}
+
+/** One line for each active (and unit) over all classes: what has to be ordered. */
+export function totalsByActive(needs: readonly Need[]): ActiveTotal[] {
+  const totals = new Map<string, ActiveTotal>();
+  for (const { active, unit, doses, total } of needs) {
+    const key = `${active}|${unit}`;
+    const sum = totals.get(key);
+    if (sum) {
+      sum.doses += doses;
+      sum.total = sum.total === null || total === null ? null : sum.total + total;
+    } else totals.set(key, { active, unit, doses, total });
+  }
+  return [...totals.values()];
 }
 
 const pick = ({ active, amount, unit, route }: Dose) => ({ active, amount, unit, route });

@@ -1,9 +1,10 @@
-import { addLocalDays } from '../time/zoned';
 import type { Finding, Instant, Plan, PlannedVisit, ProtocolBody } from '../types';
+import { checkClocks } from './checkReferences';
 import { clockFindings } from './clockFindings';
 import { along, type Clocks } from './dated';
+import { occurrences } from './occurrences';
 import { resolve, type Resolved } from './resolve';
-import { visitWindows, type Facts } from './visitWindows';
+import { momentOf, visitWindows, type Facts } from './visitWindows';
 
 export interface ExpandRequest extends Clocks {
   /** The visit whose moment is given; every other one follows from it, forwards and backwards. */
@@ -22,9 +23,12 @@ export const visitOfStep = (body: ProtocolBody, step: string): string | undefine
 /**
  * Every visit of one animal or group with its moment and window.
  * A `fix.visit` that is not in the protocol (or is dropped by an option) gives no visits and the finding
- * `unknownVisit`; nothing is thrown for what a person can type.
+ * `unknownVisit`, a gap's clock time that is none the finding `badClock`; nothing is thrown for what a person can
+ * type. An unknown zone throws a RangeError.
  */
 export function expand(body: ProtocolBody, request: ExpandRequest): Plan {
+  const badClocks = checkClocks(body);
+  if (badClocks.length > 0) return { visits: [], findings: badClocks };
   const resolved = resolve(body, request.options);
   if (!resolved.visits.includes(request.fix.visit)) {
     const finding: Finding = {
@@ -36,25 +40,37 @@ export function expand(body: ProtocolBody, request: ExpandRequest): Plan {
     return { visits: [], findings: [finding] };
   }
   const times = plannedTimes(resolved, request);
-  return assemble(body, resolved, times, request);
+  const plan = assemble(body, resolved, times, request);
+  return { visits: plan.visits, findings: [...loose(resolved, times), ...plan.findings] };
 }
+
+/** Visits that no chain of gaps ties to the fixed one: they have no moment, and that must not go unsaid. */
+const loose = (resolved: Resolved, times: ReadonlyMap<string, Instant>): Finding[] =>
+  resolved.visits
+    .filter((visit) => !times.has(visit))
+    .map((visit): Finding => ({
+      code: 'unreachable',
+      severity: 'stop',
+      steps: (resolved.stepsOf.get(visit) ?? []).map((step) => step.id),
+      visits: [visit],
+      params: { visit },
+    }));
 
 /** Planned moments along the tree of ideals, outwards from the fixed visit; what is done or adjusted stays. */
 export function plannedTimes(resolved: Resolved, request: ExpandRequest): Map<string, Instant> {
   const fixed = new Map<string, Instant>([[request.fix.visit, request.fix.at]]);
   for (const [visit, at] of Object.entries(request.adjust ?? {})) fixed.set(visit, at);
-  for (const [visit, fact] of Object.entries(request.done ?? {}))
-    fixed.set(visit, typeof fact === 'number' ? fact : fact.latest);
+  for (const [visit, fact] of Object.entries(request.done ?? {})) fixed.set(visit, momentOf(fact));
   const times = new Map([...fixed].filter(([visit]) => resolved.visits.includes(visit)));
   for (let grown = true; grown;) {
     grown = false;
     for (const { visit, parent, gap } of resolved.tree) {
       const [a, b] = [times.get(parent), times.get(visit)];
       if (a !== undefined && b === undefined) {
-        times.set(visit, along(a, gap, gap.from === parent, request));
+        times.set(visit, along(a, gap, gap.from === parent, request).at);
         grown = true;
       } else if (b !== undefined && a === undefined) {
-        times.set(parent, along(b, gap, gap.from === visit, request));
+        times.set(parent, along(b, gap, gap.from === visit, request).at);
         grown = true;
       }
     }
@@ -69,6 +85,7 @@ export function assemble(
   times: ReadonlyMap<string, Instant>,
   request: ExpandRequest,
 ): Plan {
+  if (times.size === 0) return { visits: [], findings: [] };
   const { windows, findings } = visitWindows(resolved, times, request.done ?? {}, request);
   const anchorVisit = visitOfStep(body, body.timingAnchor);
   const anchor = anchorVisit === undefined ? undefined : times.get(anchorVisit);
@@ -87,25 +104,8 @@ export function assemble(
         sinceAnchorMinutes: anchor === undefined ? 0 : (moment - anchor) / 60_000,
         sinceStartMinutes: (moment - first) / 60_000,
       });
-      const repeats = Math.max(...steps.map((step) => step.repeat?.count ?? 1));
-      return Array.from({ length: repeats }, (_, k) => {
-        const ids = steps.filter((step) => (step.repeat?.count ?? 1) > k).map((step) => step.id);
-        return one(occurrenceAt(at, steps, k, request), k + 1, ids);
-      });
+      return occurrences(at, steps, request).map((moment, k) => one(moment.at, k + 1, moment.steps));
     })
     .sort((a, b) => a.at - b.at || resolved.visits.indexOf(a.visit) - resolved.visits.indexOf(b.visit));
-  return { visits, findings: [...findings, ...clockFindings(resolved, times, request)] };
-}
-
-/** Moment of the k-th occurrence (from 0) of a repeated act: local days by the clock, minutes as elapsed. */
-function occurrenceAt(
-  at: Instant,
-  steps: { repeat?: { every: { days?: number; minutes?: number } } }[],
-  k: number,
-  clocks: Clocks,
-): Instant {
-  const every = steps.find((step) => step.repeat)?.repeat?.every;
-  if (k === 0 || !every) return at;
-  if (every.days !== undefined) return addLocalDays(at, every.days * k, clocks.zone).at;
-  return at + (every.minutes ?? 0) * k * 60_000;
+  return { visits, findings: [...findings, ...clockFindings(resolved, times, visits, request)] };
 }

@@ -1,6 +1,7 @@
 import type { Gap } from '../types';
 
-const minutesPerUnit = { elapsedHours: 60, localDays: 1440, milkings: 720 } as const;
+/** Minutes of one unit without any date: days of 24 hours, two milkings a day. */
+export const minutesPerUnit = { elapsedHours: 60, localDays: 1440, milkings: 720 } as const;
 
 /** What a gap aims at, in its own unit: its ideal, else the middle of its bounds, else the one bound it has. */
 export function idealOf(gap: Gap): number {

@@ -1,5 +1,6 @@
 import { solve, type Solution } from '../network/solve';
 import type { Bound, Network } from '../network/network';
+import { windows } from '../network/windows';
 import { nominalMinutes } from './gaps';
 import type { Resolved } from './resolve';
 
@@ -31,22 +32,18 @@ export interface NominalVisit {
 }
 
 /**
- * Every visit in minutes from the first: planned, and the window it has when all earlier visits go as planned.
- * In order of time.
+ * Every visit in minutes from the first: planned, and the window it has when all earlier visits go as planned (the
+ * planned moment itself where nothing bounds it, or nothing is left). In order of time.
  */
 export function nominalVisits(resolved: Resolved): NominalVisit[] {
   const times = nominalTimes(resolved);
+  const network = nominalNetwork(resolved);
   return resolved.visits
     .map((visit): NominalVisit => {
       const ideal = times.get(visit) ?? 0;
-      let [earliest, latest] = [-Infinity, Infinity];
-      for (const { gap, from, to } of resolved.gaps) {
-        const before = times.get(from) ?? 0;
-        if (to !== visit || before > ideal) continue;
-        const { least, most } = nominalMinutes(gap);
-        if (least !== undefined) earliest = Math.max(earliest, before + least);
-        if (most !== undefined) latest = Math.min(latest, before + most);
-      }
+      const earlier = new Map([...times].filter(([other, at]) => other !== visit && at < ideal));
+      const window = earlier.size > 0 ? windows(network, earlier).get(visit) : null;
+      const [earliest, latest] = [window?.earliest ?? ideal, window?.latest ?? ideal];
       return {
         visit,
         idealMinutes: ideal,

@@ -23,11 +23,13 @@ export interface Replan {
 /**
  * What moving one visit does to the others: later visits that hang on it go along with their ideal gaps, earlier
  * ones and those done stay where they are. Windows are worked out anew; a gap that no longer holds is a stop.
+ * A visit that is not in the plan (or not in the protocol) moves nothing and gives the finding `unknownVisit`.
  */
 export function replan(body: ProtocolBody, request: ReplanRequest): Replan {
   const resolved = resolve(body, request.options);
   const { move, planned } = request;
-  const before = planned[move.visit];
+  if (planned[move.visit] === undefined || !resolved.visits.includes(move.visit))
+    return refused({ code: 'unknownVisit', severity: 'stop', steps: [], params: { visit: move.visit } });
   const follow = followers(resolved.tree, move.visit, planned, request.done ?? {});
   const stay = Object.fromEntries(
     Object.entries(planned).filter(([visit]) => visit !== move.visit && !follow.has(visit)),
@@ -47,12 +49,14 @@ export function replan(body: ProtocolBody, request: ReplanRequest): Replan {
     return from !== undefined && from !== to ? [{ visit, from, to }] : [];
   });
   moved.sort((a, b) => Number(b.visit === move.visit) - Number(a.visit === move.visit) || a.to - b.to);
-  const findings: Finding[] =
-    before === undefined
-      ? [{ code: 'unknownVisit', severity: 'stop', steps: [], params: { visit: move.visit } }, ...plan.findings]
-      : plan.findings;
-  return { plan, moved, findings };
+  return { plan, moved, findings: plan.findings };
 }
+
+const refused = (finding: Finding): Replan => ({
+  plan: { visits: [], findings: [finding] },
+  moved: [],
+  findings: [finding],
+});
 
 /** Later visits that hang on the moved one in the tree of ideals, directly or through others that move. */
 function followers(

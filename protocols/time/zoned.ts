@@ -1,52 +1,72 @@
 import type { ClockTime, Instant, LocalDate, LocalDateTime, Zone } from '../types';
-import { Temporal } from './temporal';
+import { clockMs, dayMs, wallMs, wallText } from './civil';
+import { segmentAt, segmentsBetween } from './segments';
 
 /**
  * Instants and wall-clock times. Zones are IANA ids and always an argument.
- * Errors: an unknown zone or a malformed date throws a RangeError of the time library.
+ * Errors: an unknown zone, a malformed date or a time that is none throws a RangeError.
  */
 
 export interface LocalReading {
   at: Instant;
   /**
    * skipped: the clock jumped over this time (it is moved on by the jump); repeated: the clock showed it twice
-   * (the first of the two is taken).
+   * (the first of the two is taken, unless the later one is asked for).
    */
   kind: 'exact' | 'skipped' | 'repeated';
 }
 
-const plain = (local: LocalDateTime) => Temporal.PlainDateTime.from(local);
-
-/** The instant of a wall-clock time in a zone, and whether that time exists once, never or twice. */
-export function toInstant(local: LocalDateTime, zone: Zone): LocalReading {
-  const wanted = plain(local);
-  const earlier = wanted.toZonedDateTime(zone, { disambiguation: 'earlier' });
-  const later = wanted.toZonedDateTime(zone, { disambiguation: 'later' });
-  if (earlier.epochMilliseconds === later.epochMilliseconds) return { at: earlier.epochMilliseconds, kind: 'exact' };
-  if (earlier.toPlainDateTime().equals(wanted)) return { at: earlier.epochMilliseconds, kind: 'repeated' };
-  return { at: later.epochMilliseconds, kind: 'skipped' };
+export interface Disambiguation {
+  /**
+   * Which of two readings: of a repeated time the first (`earlier`, the default) or the second; of a skipped one as
+   * far before the jump (`earlier`) or after it (`later`, the default) as the clock would have been.
+   */
+  disambiguation?: 'earlier' | 'later';
 }
 
-const zoned = (at: Instant, zone: Zone) => Temporal.Instant.fromEpochMilliseconds(at).toZonedDateTimeISO(zone);
+/** No offset is further from UTC than 14 hours, nor does any change by more than a day. */
+const reach = 26 * 3_600_000;
+
+/** The instant of a wall-clock time in a zone, and whether that time exists once, never or twice. */
+export const toInstant = (local: LocalDateTime, zone: Zone, options: Disambiguation = {}): LocalReading =>
+  readWall(wallMs(local), zone, options.disambiguation);
+
+/** As `toInstant`, for wall-clock milliseconds (as if the zone were UTC). */
+export function readWall(wall: number, zone: Zone, choose?: 'earlier' | 'later'): LocalReading {
+  const segments = segmentsBetween(wall - reach, wall + reach, zone);
+  const readings = segments
+    .map((segment) => ({ at: wall - segment.offset, segment }))
+    .filter(({ at, segment }) => segment.from <= at && at < segment.to);
+  const [first, second] = [readings[0], readings[1]];
+  if (first && second) return { at: choose === 'later' ? second.at : first.at, kind: 'repeated' };
+  if (first) return { at: first.at, kind: 'exact' };
+  // the change that jumped over it: the segment before it ends too early, the one after it begins too late
+  const after = segments.findIndex((segment) => wall - segment.offset < segment.from);
+  const from = segments[choose === 'earlier' ? after : after - 1];
+  return { at: wall - (from?.offset ?? 0), kind: 'skipped' };
+}
+
+/** Wall-clock milliseconds of an instant, as if the zone were UTC. */
+export const toWall = (at: Instant, zone: Zone): number => at + segmentAt(at, zone).offset;
 
 /** `YYYY-MM-DDTHH:MM` on the clocks of the zone; seconds are cut off. */
-export const toLocal = (at: Instant, zone: Zone): LocalDateTime =>
-  zoned(at, zone).toPlainDateTime().toString({ smallestUnit: 'minute' });
+export const toLocal = (at: Instant, zone: Zone): LocalDateTime => wallText(toWall(at, zone));
 
 export const localDate = (at: Instant, zone: Zone): LocalDate => toLocal(at, zone).slice(0, 10);
 export const clockOf = (at: Instant, zone: Zone): ClockTime => toLocal(at, zone).slice(11, 16);
 
 /** Offset from UTC in minutes, east positive. */
-export const offsetMinutes = (at: Instant, zone: Zone): number => zoned(at, zone).offsetNanoseconds / 60_000_000_000;
+export const offsetMinutes = (at: Instant, zone: Zone): number => segmentAt(at, zone).offset / 60_000;
 
 /**
- * The same clock time (or `clock`) a number of local days later, whatever the clocks did in between.
- * A clock time that does not exist on that day is moved on by the jump.
+ * The same clock time (or `clock`) a whole number of local days later, whatever the clocks did in between.
+ * A clock time that does not exist on that day is moved on by the jump; no days and no clock is the moment itself.
  */
 export function addLocalDays(at: Instant, days: number, zone: Zone, clock?: ClockTime): LocalReading {
-  const local = toLocal(at, zone);
-  const date = Temporal.PlainDate.from(local.slice(0, 10)).add({ days });
-  return toInstant(`${date.toString()}T${clock ?? local.slice(11, 16)}`, zone);
+  if (days === 0 && clock === undefined) return { at, kind: 'exact' };
+  const wall = toWall(at, zone);
+  if (clock === undefined) return readWall(wall + days * dayMs, zone);
+  return readWall((Math.floor(wall / dayMs) + days) * dayMs + clockMs(clock), zone);
 }
 
 export interface ClockChange {
@@ -57,15 +77,12 @@ export interface ClockChange {
 
 /** Every change of the zone's offset after `from` and not after `to`. */
 export function clockChangesBetween(from: Instant, to: Instant, zone: Zone): ClockChange[] {
-  const changes: ClockChange[] = [];
-  let next = zoned(from, zone).getTimeZoneTransition('next');
-  while (next && next.epochMilliseconds <= to) {
-    const at = next.epochMilliseconds;
-    const beforeMinutes = offsetMinutes(at - 1, zone);
-    const afterMinutes = offsetMinutes(at, zone);
+  if (!(to > from)) return [];
+  const segments = segmentsBetween(from, to, zone);
+  return segments.slice(1).flatMap((segment, i): ClockChange[] => {
+    const before = segments[i]?.offset ?? segment.offset;
     // zones also change their name or law without moving the clock
-    if (beforeMinutes !== afterMinutes) changes.push({ at, beforeMinutes, afterMinutes });
-    next = next.getTimeZoneTransition('next');
-  }
-  return changes;
+    if (before === segment.offset) return [];
+    return [{ at: segment.from, beforeMinutes: before / 60_000, afterMinutes: segment.offset / 60_000 }];
+  });
 }

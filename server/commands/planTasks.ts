@@ -33,6 +33,7 @@ export function taskSteps(
   stepIds: readonly string[],
   group: { class: AnimalClass; head: number },
   authorities: readonly AuthorityUse[],
+  occurrence = 1,
 ): TaskStep[] {
   return body.steps
     .filter((step) => stepIds.includes(step.id) && holds(step.when, { options, class: group.class }) !== false)
@@ -47,7 +48,10 @@ export function taskSteps(
           : null,
       ...(step.when ? { when: step.when } : {}),
       ...observationOf(step, body),
-      doses: dosesOf(step, group.class, group.head).map((dose) => ({ ...dose, volume: volumeOf(dose, authorities) })),
+      doses: dosesOf(step, group.class, group.head, undefined, occurrence).map((dose) => ({
+        ...dose,
+        volume: volumeOf(dose, authorities),
+      })),
       cautions: [...cautionsOf(step.kind)],
     }));
 }
@@ -71,7 +75,7 @@ export function taskWords(
   return {
     title: repeats > 1 ? t('cohorts.titleOf', { title: label, n: visit.occurrence, count: repeats }) : label,
     yarded: about?.yarded ?? true,
-    steps: taskSteps(body, options, visit.steps, group, authorities),
+    steps: taskSteps(body, options, visit.steps, group, authorities, visit.occurrence),
     anchorLabel: anchor ? stepLabel(anchor) : '',
   };
 }

@@ -184,12 +184,13 @@ describe('beside the herd', () => {
   });
 
   it('refuses an EID of another animal, with its tag, and an animal that has left', () => {
-    const found = plan('Tag,Class,EID\n99,cow,999000000000099\n0012,cow,999 000000000099\n13,cow,\n', { herd });
-    expect(found.rows.map(keys)).toEqual([
-      ['server.import.eidOfAnother'],
-      ['server.import.eidOfAnother'],
-      ['server.import.animalLeft'],
-    ]);
+    const found = plan('Tag,Class,EID\n99,cow,999000000000099\n13,cow,\n', { herd });
+    expect(found.rows.map(keys)).toEqual([['server.import.eidOfAnother'], ['server.import.animalLeft']]);
+    const spaced = plan('Tag,Class,EID\n0012,cow,999 000000000099\n', { herd });
+    expect(spaced.rows.map(keys)).toEqual([['server.import.eidOfAnother']]);
+    // twice in the file as well: both faults are said
+    const both = plan('Tag,Class,EID\n99,cow,999000000000099\n0012,cow,999 000000000099\n', { herd });
+    for (const row of both.rows) expect(keys(row)).toEqual(['server.import.eidTwice', 'server.import.eidOfAnother']);
     expect(found.rows[0]?.problems[0]?.params).toEqual({ eid: '999000000000099', tag: 'B7' });
   });
 

@@ -33,7 +33,8 @@ export const findings = {
   'finding.anchorMissing.remedy': 'Choose the step that the interval to AI counts from.',
   'finding.amountMissing.message': '{step}: the amount of {active} is not written.',
   'finding.amountMissing.remedy': 'Write it from the label; without it the protocol cannot be signed off.',
-  'finding.tooManyObservations.message': 'Too much is observed: {observations} observations make {scenarios} branches.',
+  'finding.tooManyObservations.message':
+    'There is too much to choose from: {observations} observations make {scenarios} branches.',
   'finding.tooManyObservations.remedy': 'Keep three observations and eight branches at most.',
   'finding.observationUnused.message': 'No step observes this: {observation}.',
   'finding.observationUnused.remedy': 'Let a step observe it, or remove it.',
@@ -53,7 +54,7 @@ export const findings = {
   'finding.clockTimeSkipped.message': 'The clock skips this time: {local}.',
   'finding.clockTimeSkipped.remedy': 'Choose a time before or after the clock change.',
   'finding.clockTimeTwice.message': 'The clock shows this time twice on that night: {due}.',
-  'finding.clockTimeTwice.remedy': 'The first one is meant. Choose another time if that is doubtful.',
+  'finding.clockTimeTwice.remedy': 'Choose another time, or tell the crew which of the two is meant.',
   'finding.weekend.message': '{visit} falls on a weekend: {due}.',
   'finding.weekend.remedy': 'Make sure of the crew, or choose another day.',
   'finding.holiday.message': '{visit} falls on a public holiday: {due}, {name}.',
@@ -87,12 +88,12 @@ export const findings = {
   'finding.authorityShort.message': 'The authority for {active} covers {covered} head, the cohort has {head}.',
   'finding.authorityShort.remedy': 'Ask the vet to extend it by {short}, or leave {short} out.',
   'finding.authorityExpired.message':
-    'The authority for {active} does not cover {lastDay}: it is valid until {validTo}.',
+    'The authority for {active} does not cover {lastDay}: it is valid from {validFrom} to {validTo}.',
   'finding.authorityExpired.remedy': 'Ask the vet for a longer one.',
   'finding.authorityWrongClass.message': 'The authority for {active} is not for {class}.',
   'finding.authorityWrongClass.remedy': 'Ask the vet for one that is.',
   'finding.authorityWrongActive.message':
-    'The authority for {active} allows {authorised} a head, the protocol gives {amount}.',
+    'The authority for {active} allows {authorised} {authorisedUnit} a head, the protocol gives {amount} {unit}.',
   'finding.authorityWrongActive.remedy': 'Ask the vet for one that fits.',
   'finding.windowMissed.message': '{from} to {to} would be {elapsed}; it may be {limits}.',
   'finding.windowMissed.remedy': 'Move it by {over} towards its window, or ask the vet.',

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 
+import { checkProtocol } from '@/protocols/plan/check';
 import { expand } from '@/protocols/plan/expand';
 import { toInstant, toLocal } from '@/protocols/time/zoned';
 import type { Plan, ProtocolBody } from '@/protocols/types';
@@ -46,6 +47,62 @@ describe('expanding from the start', () => {
     spanned.gaps.push(hours('deviceIn', 'service', 0, 222, 224));
     const { window } = visit(fixed(spanned, 'in', '2026-05-04T08:00'), 'ai');
     expect(toLocal(window.latest, sydney)).toBe('2026-05-13T16:00');
+  });
+});
+
+describe('two visits planned at the same moment', () => {
+  const together = () => {
+    const protocol = sevenDay();
+    protocol.visits.push({ id: 'calves', label: 'Calves off', yarded: false });
+    protocol.steps.push(step('calvesOff', 'calvesOff', 'calves', { level: 'group' }));
+    protocol.gaps.push(hours('deviceOut', 'calvesOff', 0, 0, 6));
+    return protocol;
+  };
+
+  it('do not pin each other: what comes before both decides, and the gap between them', () => {
+    const plan = fixed(together(), 'in', '2026-05-04T08:00');
+    const shown = (id: string) => {
+      const { window } = visit(plan, id);
+      return [toLocal(window.earliest, sydney), toLocal(window.latest, sydney)];
+    };
+    expect(shown('out')).toEqual(['2026-05-11T07:00', '2026-05-11T09:00']);
+    expect(shown('calves')).toEqual(['2026-05-11T07:00', '2026-05-11T15:00']);
+  });
+
+  it('nor without dates', () => {
+    const calves = checkProtocol(together()).scenarios[0]?.visits.find((v) => v.visit === 'calves');
+    expect(calves).toMatchObject({
+      earliestMinutes: 7 * 1440 - 60,
+      idealMinutes: 7 * 1440,
+      latestMinutes: 7 * 1440 + 7 * 60,
+    });
+  });
+});
+
+describe('a day gap with a clock time of its own', () => {
+  const seven = (n: number, clock: string) =>
+    sevenDay(52, 54, 56, {
+      gaps: [days('deviceIn', 'deviceOut', n, 60, { clock }), hours('deviceOut', 'service', 52, 54, 56)],
+    });
+
+  it('sets the clock of its end, on the same day too', () => {
+    expect(local(fixed(seven(7, '06:30'), 'in', '2026-05-04T08:00'), 'out')).toBe('2026-05-11T06:30');
+    expect(local(fixed(seven(0, '16:00'), 'in', '2026-05-04T08:00'), 'out')).toBe('2026-05-04T16:00');
+  });
+
+  it('never sets that of its start: backwards the start has the clock time of the end', () => {
+    expect(local(fixed(seven(7, '06:30'), 'out', '2026-05-11T06:30'), 'in')).toBe('2026-05-04T06:30');
+  });
+
+  it('may point back in time: a gap of minus two days ends before it starts', () => {
+    expect(local(fixed(seven(-2, '06:30'), 'in', '2026-05-04T08:00'), 'out')).toBe('2026-05-02T06:30');
+    expect(local(fixed(seven(-2, '06:30'), 'out', '2026-05-02T06:30'), 'in')).toBe('2026-05-04T06:30');
+  });
+
+  it('is missed by an end at another time of day', () => {
+    const plan = fixed(seven(7, '06:30'), 'out', '2026-05-11T08:00');
+    const found = plan.findings.filter((f) => f.code === 'windowMissed');
+    expect(found[0]).toMatchObject({ params: { gap: 'deviceIn-deviceOut', overMinutes: 30 } });
   });
 });
 
@@ -188,11 +245,37 @@ describe('what is done', () => {
     expect(visit(plan, 'ai').window).toEqual({ earliest: late + 52 * 3_600_000, latest: late + 56 * 3_600_000 });
   });
 
-  it('as an interval leaves only what holds for all of it: a device lost some time in six hours', () => {
-    const done = { out: { earliest: at('2026-05-11T02:00'), latest: at('2026-05-11T05:00') } };
-    const plan = expand(sevenDay(), { fix: { visit: 'out', at: done.out.latest }, zone: sydney, done });
+  it('as an interval leaves only what holds for all of it: a device lost some time between two and five', () => {
+    const out = { earliest: at('2026-05-11T02:00'), latest: at('2026-05-11T05:00') };
+    const done = { in: at('2026-05-04T04:00'), out };
+    const plan = expand(sevenDay(), { fix: { visit: 'in', at: at('2026-05-04T04:00') }, zone: sydney, done });
+    // 52 h after five to 56 h after two; planned 54 h after the middle of the interval
     const { window } = visit(plan, 'ai');
-    expect(window.latest - window.earliest).toBeLessThanOrEqual(7 * 3_600_000);
+    expect([toLocal(window.earliest, sydney), toLocal(window.latest, sydney)]).toEqual([
+      '2026-05-13T09:00',
+      '2026-05-13T10:00',
+    ]);
+    expect(local(plan, 'ai')).toBe('2026-05-13T09:30');
+    expect(plan.findings.filter((f) => f.severity === 'stop')).toEqual([]);
+  });
+
+  it('as an interval too wide for any moment leaves no window, and says by how much at the worst', () => {
+    const done = { out: { earliest: at('2026-05-11T00:00'), latest: at('2026-05-11T08:00') } };
+    const plan = expand(sevenDay(), { fix: { visit: 'in', at: at('2026-05-04T04:00') }, zone: sydney, done });
+    const missed = plan.findings.filter((f) => f.code === 'windowMissed' && f.visits?.includes('ai'));
+    // planned 54 h after 04:00: 58 h if it was lost at midnight, 2 h more than the most
+    expect(missed).toMatchObject([{ severity: 'stop', params: { elapsedMinutes: 58 * 60, overMinutes: 120 } }]);
+  });
+});
+
+describe('a gap that was broken', () => {
+  it('is told once, of its later end, as a fact and not as a stop', () => {
+    const done = { in: at('2026-05-04T08:00'), out: at('2026-05-11T12:00') };
+    const plan = expand(sevenDay(), { fix: { visit: 'in', at: done.in }, zone: sydney, done });
+    expect(plan.findings).toMatchObject([
+      { code: 'windowMissed', severity: 'warn', visits: ['out'], params: { overMinutes: 180 } },
+    ]);
+    expect(visit(plan, 'ai').window.earliest).toBe(done.out + 52 * 3_600_000);
   });
 });
 
@@ -218,6 +301,39 @@ describe('repeats and options', () => {
     expect(local(plan, 'pg')).toBe('2026-06-05T08:00');
   });
 
+  it('of two rates in one visit make one list of moments, each with its own steps', () => {
+    const flush = body({
+      visits: [{ id: 'v', label: 'Flush', yarded: true }],
+      steps: [
+        step('fsh', 'fsh', 'v', { repeat: { every: { minutes: 720 }, count: 4 } }),
+        step('scan', 'ovarianScan', 'v', { repeat: { every: { days: 1 }, count: 2 } }),
+        step('in', 'deviceIn', 'v'),
+      ],
+      timingAnchor: 'fsh',
+      serviceStep: 'fsh',
+    });
+    const plan = fixed(flush, 'v', '2026-05-04T06:00');
+    expect(plan.visits.map((v) => [v.occurrence, toLocal(v.at, sydney).slice(8), v.steps])).toEqual([
+      [1, '04T06:00', ['fsh', 'scan', 'in']],
+      [2, '04T18:00', ['fsh']],
+      [3, '05T06:00', ['fsh', 'scan']],
+      [4, '05T18:00', ['fsh']],
+    ]);
+  });
+
+  it('that make no sense still give the first occurrence, and never a list without end', () => {
+    const count = (n: number) =>
+      fixed(
+        body({
+          visits: [{ id: 'v', label: 'V', yarded: true }],
+          steps: [step('s', 'fsh', 'v', { repeat: { every: { days: 1 }, count: n } })],
+        }),
+        'v',
+        '2026-05-04T06:00',
+      ).visits.length;
+    expect([count(0), count(-3), count(Number.NaN), count(1e12)]).toEqual([1, 1, 1, 366]);
+  });
+
   it('take the chosen option, and the default when none is chosen', () => {
     const choice = sevenDay();
     choice.options = [
@@ -240,6 +356,20 @@ describe('repeats and options', () => {
     const request = { fix: { visit: 'in', at: at('2026-05-04T08:00') }, zone: sydney };
     expect(local(expand(choice, request), 'pg2')).toBe('2026-05-11T16:00');
     expect(local(expand(choice, { ...request, options: { second: 'h24' } }), 'pg2')).toBe('2026-05-12T08:00');
+  });
+
+  it('leave a visit without any gap out of the plan, and stop it', () => {
+    const loose = sevenDay();
+    loose.gaps.pop();
+    const plan = fixed(loose, 'in', '2026-05-04T08:00');
+    expect(plan.visits.map((v) => v.visit)).toEqual(['in', 'out']);
+    expect(plan.findings).toMatchObject([{ code: 'unreachable', severity: 'stop', visits: ['ai'] }]);
+  });
+
+  it('answer a clock time that is none with a finding, not with an exception', () => {
+    const bad = sevenDay();
+    bad.gaps[0] = days('deviceIn', 'deviceOut', 7, 60, { clock: '7am' });
+    expect(fixed(bad, 'in', '2026-05-04T08:00')).toMatchObject({ visits: [], findings: [{ code: 'badClock' }] });
   });
 
   it('answer an unknown visit with a finding, not with an exception', () => {

@@ -71,4 +71,38 @@ describe('moving a visit', () => {
     ]);
     expect(findings).toEqual([]);
   });
+
+  it('of a plan that lacks it, or of a protocol that does, moves nothing and says so', () => {
+    const to = at('2026-05-11T09:00');
+    for (const request of [
+      { zone, planned, move: { visit: 'nowhere', to } },
+      { zone, planned: {}, move: { visit: 'out', to } },
+    ]) {
+      const { moved, plan, findings } = replan(sevenDay(), request);
+      expect([moved, plan.visits]).toEqual([[], []]);
+      expect(findings).toMatchObject([{ code: 'unknownVisit', severity: 'stop' }]);
+    }
+  });
+
+  it('over a clock change keeps the clock hour of what follows by days', () => {
+    const spring = expand(sevenDay(), { fix: { visit: 'in', at: at('2026-09-28T07:00') }, zone });
+    const before = Object.fromEntries(spring.visits.map((v) => [v.visit, v.at]));
+    const { moved } = replan(sevenDay(), { zone, planned: before, move: { visit: 'in', to: at('2026-09-30T07:30') } });
+    expect(local(moved)).toEqual([
+      ['in', '2026-09-30T07:30'],
+      ['out', '2026-10-07T07:30'],
+      ['ai', '2026-10-09T13:30'],
+    ]);
+  });
+
+  it('does not reach through what is done: service stays where it was agreed, although the start moves', () => {
+    const agreed = { ...planned, ai: at('2026-05-13T15:30') };
+    const { moved } = replan(sevenDay(), {
+      zone,
+      planned: agreed,
+      done: { out: planned.out ?? 0 },
+      move: { visit: 'in', to: at('2026-05-04T08:30') },
+    });
+    expect(local(moved)).toEqual([['in', '2026-05-04T08:30']]);
+  });
 });
