@@ -8,23 +8,23 @@ import { color, space } from '../theme/tokens';
 import { Link } from '../ui/Link';
 import { Text } from '../ui/Text';
 import { TreatmentMark } from '../ui/TreatmentMark';
-import { weekdayOf } from './dates';
 
 interface DayProps {
   date: string;
   isToday: boolean;
+  isWeekend: boolean;
   tasks: readonly Task[];
+  /** Words of each holiday. */
   holidays: readonly string[];
   showProperty: boolean;
-  /** Whether the person may open the work. */
-  opens: boolean;
+  /** Whether the person may open the work of a task. */
+  opens: (task: Task) => boolean;
 }
 
 /** One day of the week: its name, what it is, and its yardings in order of time. */
-export function CalendarDay({ date, isToday, tasks, holidays, showProperty, opens }: DayProps) {
+export function CalendarDay(props: DayProps) {
+  const { date, isToday, isWeekend, tasks, holidays, showProperty, opens } = props;
   const wide = useWide();
-  const weekend = weekdayOf(date) >= 6;
-  const names = [...new Set(holidays)];
   return (
     <View role="listitem" style={[wide ? styles.column : styles.row, isToday && styles.today]}>
       <View style={styles.head}>
@@ -36,12 +36,12 @@ export function CalendarDay({ date, isToday, tasks, holidays, showProperty, open
             {t('today.title')}
           </Text>
         ) : null}
-        {names.map((name) => (
-          <Text key={name} variant="small" tone="warn" strong>
-            {t('calendar.holiday', { name })}
+        {holidays.map((words) => (
+          <Text key={words} variant="small" tone="warn" strong>
+            {words}
           </Text>
         ))}
-        {weekend && names.length === 0 ? (
+        {isWeekend ? (
           <Text variant="small" tone="quiet">
             {t('calendar.weekend')}
           </Text>
@@ -53,7 +53,7 @@ export function CalendarDay({ date, isToday, tasks, holidays, showProperty, open
         </Text>
       ) : null}
       {tasks.map((task) => (
-        <Entry key={task.id} task={task} showProperty={showProperty} opens={opens} />
+        <Entry key={task.id} task={task} showProperty={showProperty} opens={opens(task)} />
       ))}
     </View>
   );

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
 import { useSaveAnimal } from '@/hooks/useHerd';
@@ -16,6 +17,7 @@ import { Segmented } from '../ui/RadioGroup';
 import { Select } from '../ui/Select';
 import { failureWords } from '../ui/states';
 import { toast } from '../ui/toast';
+import { isNoFigure, readFigure } from './figure';
 
 type Detail = Output<'GET /api/animals/:animalId'>;
 
@@ -33,42 +35,61 @@ const first = (animal: Detail) => ({
 });
 
 const orNull = (text: string): string | null => (text.trim() === '' ? null : text.trim());
-const figureOrNull = (text: string): number | null => (text.trim() === '' ? null : Number(text.replace(',', '.')));
+type Typed = ReturnType<typeof first>;
+
+const figures = ['weightKg', 'condition'] as const;
+
+/** Only what was changed: what somebody else changed meanwhile is left alone. */
+function changesOf(form: Typed, animal: Detail): Record<string, unknown> {
+  const all: Record<keyof Typed, unknown> = {
+    class: form.class,
+    breed: orNull(form.breed),
+    birth: orNull(form.birth),
+    lastCalving: orNull(form.lastCalving),
+    lastService: orNull(form.lastService),
+    knownEmpty: form.knownEmpty === 'unknown' ? null : form.knownEmpty === 'yes',
+    weightKg: readFigure(form.weightKg),
+    condition: readFigure(form.condition),
+    paddock: orNull(form.paddock),
+    note: orNull(form.note),
+  };
+  const before = first(animal);
+  return Object.fromEntries(
+    Object.entries(all).filter(([key]) => form[key as keyof Typed] !== before[key as keyof Typed]),
+  );
+}
 
 /** Changes what is known of an animal: empty clears. Typed values stay on the device until the server has them. */
 export function AnimalForm({ animal, onDone }: { animal: Detail; onDone: () => void }) {
   const [form, setForm, accepted] = useKept(`animal-${animal.id}`, first(animal));
   const save = useSaveAnimal(animal.id);
-  const set = (key: keyof typeof form) => (value: string) => setForm({ ...form, [key]: value });
-  const error = (key: keyof typeof form) => fieldError(save.error, key);
-  const send = () =>
-    save.mutate(
-      {
-        class: form.class,
-        breed: orNull(form.breed),
-        birth: orNull(form.birth),
-        lastCalving: orNull(form.lastCalving),
-        lastService: orNull(form.lastService),
-        knownEmpty: form.knownEmpty === 'unknown' ? null : form.knownEmpty === 'yes',
-        weightKg: figureOrNull(form.weightKg),
-        condition: figureOrNull(form.condition),
-        paddock: orNull(form.paddock),
-        note: orNull(form.note),
+  const set = (key: keyof Typed) => (value: string) => setForm({ ...form, [key]: value });
+  const [tried, setTried] = useState(false);
+  const error = (key: keyof Typed) =>
+    tried && figures.some((one) => one === key) && isNoFigure(form[key])
+      ? t('herd.figure')
+      : fieldError(save.error, key);
+  const finish = () => {
+    accepted();
+    onDone();
+  };
+  const send = () => {
+    setTried(true);
+    if (figures.some((key) => isNoFigure(form[key]))) return;
+    save.mutate(changesOf(form, animal), {
+      onSuccess: () => {
+        toast(t('herd.saved'));
+        finish();
       },
-      {
-        onSuccess: () => {
-          accepted();
-          toast(t('herd.saved'));
-          onDone();
-        },
-      },
-    );
+    });
+  };
   return (
     <Form onSubmit={send}>
       <Select
         label={t('herd.class')}
         value={form.class}
         onChange={(value) => setForm({ ...form, class: value })}
+        error={error('class')}
         options={animalClasses.map((value) => ({ value, label: tData(`classOne.${value}`, value) }))}
       />
       <Segmented
@@ -110,10 +131,10 @@ export function AnimalForm({ animal, onDone }: { animal: Detail; onDone: () => v
       {save.error ? <Notice tone="stop">{failureWords(save.error)}</Notice> : null}
       <View style={styles.row}>
         <Button kind="primary" label={t('herd.save')} onPress={send} busy={save.isPending} />
-        <Button kind="quiet" label={t('ui.cancel')} onPress={onDone} />
+        <Button kind="quiet" label={t('ui.cancel')} onPress={finish} />
       </View>
     </Form>
   );
 }
 
-const styles = StyleSheet.create({ row: { flexDirection: 'row', gap: space.s } });
+const styles = StyleSheet.create({ row: { flexDirection: 'row', flexWrap: 'wrap', gap: space.s } });

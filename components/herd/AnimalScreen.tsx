@@ -1,21 +1,21 @@
 import { useLocalSearchParams } from 'expo-router';
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
 
 import { useAnimal } from '@/hooks/useHerd';
-import { useCan, useMe, propertyOf } from '@/hooks/useMe';
+import { useCan } from '@/hooks/useMe';
 import type { Output } from '@/shared/routes';
 import { t, tData } from '@/shared/messages';
-import { dayClock } from '@/shared/when';
 import { color, space } from '../theme/tokens';
 import { Button } from '../ui/Button';
-import { RailList, RailRow } from '../ui/Rail';
+import { Link } from '../ui/Link';
 import { Screen } from '../ui/Screen';
 import { Loaded } from '../ui/states';
 import { TagChip } from '../ui/TagChip';
 import { Text } from '../ui/Text';
 import { AnimalForm } from './AnimalForm';
-import { emptyWords } from './words';
+import { AnimalHistory } from './AnimalHistory';
+import { dateWords, emptyWords } from './words';
 
 type Detail = Output<'GET /api/animals/:animalId'>;
 
@@ -37,7 +37,7 @@ export function AnimalScreen() {
           <View style={styles.page}>
             <TagChip tag={animal.tag} size="l" />
             {editing ? <AnimalForm animal={animal} onDone={() => setEditing(false)} /> : <Facts animal={animal} />}
-            <History animal={animal} />
+            <AnimalHistory animal={animal} />
           </View>
         )}
       </Loaded>
@@ -45,69 +45,62 @@ export function AnimalScreen() {
   );
 }
 
+const date = (value: string | null): string | null => (value === null ? null : dateWords(value));
+
 function Facts({ animal }: { animal: Detail }) {
+  const mayOpen = useCan()('cohort.read', animal.propertyId);
+  const { cohort } = animal;
   const facts: [string, string | number | null][] = [
     [t('herd.eid'), animal.eid],
     [t('herd.class'), tData(`classOne.${animal.class}`, animal.class)],
     [t('herd.breed'), animal.breed],
-    [t('herd.birth'), animal.birth],
-    [t('herd.lastCalving'), animal.lastCalving],
-    [t('herd.lastService'), animal.lastService],
+    [t('herd.birth'), date(animal.birth)],
+    [t('herd.lastCalving'), date(animal.lastCalving)],
+    [t('herd.lastService'), date(animal.lastService)],
     [t('herd.knownEmpty'), emptyWords(animal.knownEmpty)],
     [t('herd.weightKg'), animal.weightKg],
     [t('herd.condition'), animal.condition],
     [t('herd.paddock'), animal.paddock],
     [t('herd.sire'), animal.sire],
     [t('herd.dam'), animal.dam],
-    [t('herd.cohort'), animal.cohort?.name ?? t('herd.noCohort')],
     [t('herd.note'), animal.note],
   ];
   return (
     <dl style={{ margin: 0 }}>
-      {facts
-        .filter(([, value]) => value !== null)
-        .map(([label, value]) => (
-          <View key={label} style={styles.fact}>
-            <dt style={{ flex: '0 0 160px' }}>
-              <Text tone="quiet">{label}</Text>
-            </dt>
-            <dd style={{ margin: 0 }}>
-              <Text strong>{String(value)}</Text>
-            </dd>
-          </View>
-        ))}
+      {facts.map(([label, value]) =>
+        value === null ? null : (
+          <Fact key={label} label={label}>
+            <Text strong>{String(value)}</Text>
+          </Fact>
+        ),
+      )}
+      <Fact label={t('herd.cohort')}>
+        {cohort && mayOpen ? (
+          <Link href={{ pathname: '/cohorts/[id]', params: { id: cohort.id } }}>{cohort.name}</Link>
+        ) : (
+          <Text strong>{cohort?.name ?? t('herd.noCohort')}</Text>
+        )}
+      </Fact>
     </dl>
   );
 }
 
-function History({ animal }: { animal: Detail }) {
-  const zone = propertyOf(useMe().data, animal.propertyId)?.zone ?? 'UTC';
-  return (
-    <View>
-      <Text variant="heading" level={2}>
-        {t('herd.history')}
-      </Text>
-      {animal.events.length === 0 ? <Text tone="quiet">{t('herd.noHistory')}</Text> : null}
-      <RailList label={t('herd.history')}>
-        {animal.events.map((event) => (
-          <RailRow
-            key={`${event.at}${event.title}`}
-            title={event.title}
-            subtitle={[dayClock(Date.parse(event.at), zone), event.detail, event.by].filter(Boolean).join(' · ')}
-          />
-        ))}
-      </RailList>
-    </View>
-  );
-}
+/** Label and value; a plain element, since only a div may stand between a list of facts and its terms. */
+const Fact = ({ label, children }: { label: string; children: ReactNode }) => (
+  <div style={factStyle}>
+    <dt style={{ flex: '0 0 128px' }}>
+      <Text tone="quiet">{label}</Text>
+    </dt>
+    <dd style={{ margin: 0, minWidth: 0, overflowWrap: 'anywhere' }}>{children}</dd>
+  </div>
+);
 
-const styles = StyleSheet.create({
-  page: { gap: space.l },
-  fact: {
-    flexDirection: 'row',
-    gap: space.m,
-    paddingVertical: 10,
-    borderBottomWidth: 1,
-    borderBottomColor: color.rail,
-  },
-});
+const factStyle = {
+  display: 'flex',
+  gap: space.m,
+  alignItems: 'baseline',
+  padding: '10px 0',
+  borderBottom: `1px solid ${color.rail}`,
+} as const;
+
+const styles = StyleSheet.create({ page: { gap: space.l } });

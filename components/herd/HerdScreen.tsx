@@ -2,6 +2,7 @@ import { useState } from 'react';
 import { StyleSheet, View } from 'react-native';
 
 import { useAnimals } from '@/hooks/useHerd';
+import { useMe } from '@/hooks/useMe';
 import { useOneProperty } from '@/hooks/usePlace';
 import { animalClasses, type AnimalClass } from '@/protocols/types';
 import type { Animal } from '@/shared/contracts/herd';
@@ -11,19 +12,19 @@ import { Button } from '../ui/Button';
 import { DataTable, type Column } from '../ui/DataTable';
 import { Field } from '../ui/Field';
 import { Link, LinkButton } from '../ui/Link';
+import { Notice } from '../ui/Notice';
 import { Screen } from '../ui/Screen';
 import { Select } from '../ui/Select';
-import { EmptyState, Loaded } from '../ui/states';
+import { EmptyState, failureWords, Loaded } from '../ui/states';
 import { TagChip } from '../ui/TagChip';
 import { Text } from '../ui/Text';
-import { emptyWords } from './words';
+import { useSettled } from './useSettled';
+import { dateWords, emptyWords } from './words';
 
 /** The animals of a property: search by tag or EID. */
 export function HerdScreen() {
+  const me = useMe();
   const { property, properties, choose } = useOneProperty('herd.read');
-  const [search, setSearch] = useState('');
-  const [animalClass, setClass] = useState<AnimalClass | 'all'>('all');
-  const query = useAnimals(property?.id ?? '', { search, class: animalClass === 'all' ? null : animalClass });
   const mayImport = property?.abilities.includes('herd.import') ?? false;
   return (
     <Screen
@@ -32,17 +33,38 @@ export function HerdScreen() {
       width="full"
       toolbar={mayImport ? <LinkButton href="/herd/import" label={t('herd.import')} kind="primary" /> : null}
     >
+      {property ? (
+        <>
+          {properties.length > 1 ? (
+            <View style={styles.filter}>
+              <Select
+                label={t('planner.property')}
+                value={property.id}
+                onChange={choose}
+                options={properties.map((one) => ({ value: one.id, label: one.name }))}
+              />
+            </View>
+          ) : null}
+          <Animals key={property.id} propertyId={property.id} />
+        </>
+      ) : (
+        <Loaded query={me}>{() => <EmptyState title={t('herd.closed')} next={t('server.forbidden')} />}</Loaded>
+      )}
+    </Screen>
+  );
+}
+
+function Animals({ propertyId }: { propertyId: string }) {
+  const [search, setSearch] = useState('');
+  const [animalClass, setClass] = useState<AnimalClass | 'all'>('all');
+  const query = useAnimals(propertyId, {
+    search: useSettled(search),
+    class: animalClass === 'all' ? null : animalClass,
+  });
+  const filtered = search.trim() !== '' || animalClass !== 'all';
+  return (
+    <>
       <View style={styles.filters}>
-        {properties.length > 1 && property ? (
-          <View style={styles.filter}>
-            <Select
-              label={t('planner.property')}
-              value={property.id}
-              onChange={choose}
-              options={properties.map((one) => ({ value: one.id, label: one.name }))}
-            />
-          </View>
-        ) : null}
         <View style={styles.filter}>
           <Field label={t('herd.search')} kind="search" value={search} onChange={setSearch} />
         </View>
@@ -62,7 +84,7 @@ export function HerdScreen() {
         {(data) => {
           const animals = data.pages.flatMap((page) => page.items);
           if (animals.length === 0)
-            return search || animalClass !== 'all' ? (
+            return filtered ? (
               <EmptyState title={t('herd.emptySearch')} />
             ) : (
               <EmptyState title={t('herd.empty')} next={t('herd.emptyHint')} />
@@ -70,7 +92,7 @@ export function HerdScreen() {
           return (
             <View style={styles.list}>
               <Text variant="small" tone="quiet" role="status">
-                {t('herd.count', { count: animals.length })}
+                {query.isPlaceholderData ? t('ui.loading') : t('herd.count', { count: animals.length })}
               </Text>
               <DataTable
                 caption={t('herd.title')}
@@ -79,6 +101,7 @@ export function HerdScreen() {
                 rows={animals}
                 rowKey={(animal) => animal.id}
               />
+              {query.isFetchNextPageError ? <Notice tone="stop">{failureWords(query.error)}</Notice> : null}
               {query.hasNextPage ? (
                 <Button
                   label={t('herd.more')}
@@ -90,7 +113,7 @@ export function HerdScreen() {
           );
         }}
       </Loaded>
-    </Screen>
+    </>
   );
 }
 
@@ -108,7 +131,11 @@ const columns: Column<Animal>[] = [
   { key: 'eid', title: t('herd.eid'), cell: (animal) => animal.eid ?? '–' },
   { key: 'class', title: t('herd.class'), cell: (animal) => tData(`classOne.${animal.class}`, animal.class) },
   { key: 'breed', title: t('herd.breed'), cell: (animal) => animal.breed ?? '–' },
-  { key: 'calving', title: t('herd.lastCalving'), cell: (animal) => animal.lastCalving ?? '–' },
+  {
+    key: 'calving',
+    title: t('herd.lastCalving'),
+    cell: (animal) => (animal.lastCalving ? dateWords(animal.lastCalving) : '–'),
+  },
   { key: 'empty', title: t('herd.knownEmpty'), cell: (animal) => emptyWords(animal.knownEmpty) },
   { key: 'paddock', title: t('herd.paddock'), cell: (animal) => animal.paddock ?? '–' },
   { key: 'cohort', title: t('herd.cohort'), cell: (animal) => animal.cohort?.name ?? t('herd.noCohort') },

@@ -1,4 +1,4 @@
-import { View } from 'react-native';
+import { StyleSheet, View } from 'react-native';
 
 import type { ImportPreview, ImportRequest } from '@/shared/contracts/herd';
 import { t, tData } from '@/shared/messages';
@@ -26,21 +26,29 @@ const fields: readonly Field[] = [
   'note',
 ];
 
+interface ColumnsProps {
+  preview: ImportPreview;
+  request: ImportRequest;
+  onChange: (mapping: Mapping) => void;
+}
+
 /** Which column means what; the server has proposed, people decide. */
-export function ImportColumns({ preview, onChange }: { preview: ImportPreview; onChange: (mapping: Mapping) => void }) {
+export function ImportColumns({ preview, request, onChange }: ColumnsProps) {
+  // what was chosen last, even while the answer to it is still on its way or was a refusal
+  const mapping = request.mapping ?? preview.mapping;
   return (
     <View>
       <Text variant="heading" level={2}>
         {t('import.columns')}
       </Text>
-      <View style={{ flexDirection: 'row', flexWrap: 'wrap', gap: space.m, paddingTop: space.s }}>
+      <View style={styles.columns}>
         {preview.columns.map((column) => (
-          <View key={column.header} style={{ flexBasis: 240, flexGrow: 1, maxWidth: 340 }}>
+          <View key={column.header} style={styles.column}>
             <Select
               label={column.header}
-              hint={column.sample.join(' · ')}
-              value={column.field ?? 'leave'}
-              onChange={(value) => onChange({ ...preview.mapping, [column.header]: value === 'leave' ? null : value })}
+              hint={column.sample.join(' · ') || t('import.blank')}
+              value={mapping[column.header] ?? 'leave'}
+              onChange={(value) => onChange({ ...mapping, [column.header]: value === 'leave' ? null : value })}
               options={[
                 { value: 'leave' as const, label: t('import.leaveOut') },
                 ...fields.map((value) => ({ value, label: tData(`herd.${value}`, value) })),
@@ -52,3 +60,8 @@ export function ImportColumns({ preview, onChange }: { preview: ImportPreview; o
     </View>
   );
 }
+
+const styles = StyleSheet.create({
+  columns: { flexDirection: 'row', flexWrap: 'wrap', gap: space.m, paddingTop: space.s },
+  column: { flexBasis: 240, flexGrow: 1, maxWidth: 340, minWidth: 0, justifyContent: 'flex-end' },
+});

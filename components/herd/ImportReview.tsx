@@ -3,7 +3,7 @@ import { StyleSheet, View } from 'react-native';
 import { animalClasses } from '@/protocols/types';
 import type { ImportPreview, ImportRequest } from '@/shared/contracts/herd';
 import { t, tData } from '@/shared/messages';
-import { color, font, space } from '../theme/tokens';
+import { color, space } from '../theme/tokens';
 import { Button } from '../ui/Button';
 import { Notice } from '../ui/Notice';
 import { RadioGroup } from '../ui/RadioGroup';
@@ -17,28 +17,30 @@ interface ReviewProps {
   request: ImportRequest;
   looking: boolean;
   committing: boolean;
+  /** Why the last change could not be looked at; the rows shown are those before it. */
+  lookError: string | undefined;
+  commitError: string | undefined;
   onChange: (part: Partial<ImportRequest>) => void;
+  onLookAgain: () => void;
   onCommit: () => void;
 }
 
-const delimiterWords: Record<string, string> = {
-  ',': t('import.comma'),
-  ';': t('import.semicolon'),
-  '\t': t('import.tab'),
+const delimiterWords = (delimiter: string): string => {
+  const words = { ',': t('import.comma'), ';': t('import.semicolon'), '\t': t('import.tab') };
+  return words[delimiter as keyof typeof words] ?? delimiter;
 };
 
 /** What the import would do: questions first, then counts, columns and every row. */
-export function ImportReview({ preview, request, looking, committing, onChange, onCommit }: ReviewProps) {
+export function ImportReview(props: ReviewProps) {
+  const { preview, request, looking, lookError, onChange, onLookAgain } = props;
   const { counts, questions } = preview;
-  const changes = counts.create + counts.update;
-  const ready = questions.length === 0 && changes > 0 && !looking;
   return (
     <View style={styles.review}>
       <Text tone="quiet">
         {t('import.file', {
           name: preview.fileName,
           encoding: preview.encoding,
-          delimiter: delimiterWords[preview.delimiter] ?? preview.delimiter,
+          delimiter: delimiterWords(preview.delimiter),
         })}
       </Text>
       {questions.length > 0 || request.dateOrder || request.defaultClass ? (
@@ -47,7 +49,7 @@ export function ImportReview({ preview, request, looking, committing, onChange, 
       <View style={styles.counts}>
         {(['create', 'update', 'skip', 'refuse'] as const).map((key) => (
           <View key={key} style={styles.count}>
-            <Text style={styles.figure} tone={key === 'refuse' && counts.refuse > 0 ? 'stop' : 'ink'}>
+            <Text variant="bigFigure" tone={key === 'refuse' && counts.refuse > 0 ? 'stop' : 'ink'}>
               {counts[key]}
             </Text>
             <Text variant="small" tone="quiet">
@@ -56,18 +58,36 @@ export function ImportReview({ preview, request, looking, committing, onChange, 
           </View>
         ))}
       </View>
+      <View role="status">{looking ? <Text tone="quiet">{t('import.lookingAgain')}</Text> : null}</View>
+      {lookError ? (
+        <Notice tone="stop" action={<Button label={t('ui.retry')} onPress={onLookAgain} />}>
+          {lookError}
+        </Notice>
+      ) : null}
+      <Commit {...props} />
+      <ImportColumns preview={preview} request={request} onChange={(mapping) => onChange({ mapping })} />
+      <ImportRows rows={preview.rows} />
+    </View>
+  );
+}
+
+function Commit({ preview, looking, committing, lookError, commitError, onCommit }: ReviewProps) {
+  const { counts, questions } = preview;
+  const changes = counts.create + counts.update;
+  const why = questions.length > 0 ? t('import.notYet') : changes === 0 ? t('import.nothing') : undefined;
+  return (
+    <View style={styles.commit}>
       {counts.refuse > 0 ? <Text>{t('import.commitRefused', { count: counts.refuse })}</Text> : null}
       <Button
         kind="primary"
         size={64}
         label={t('import.commit', { count: changes })}
-        disabled={!ready}
+        disabled={why !== undefined || looking || lookError !== undefined}
         busy={committing}
-        why={questions.length > 0 ? t('import.questions') : changes === 0 ? t('import.nothing') : undefined}
+        why={why}
         onPress={onCommit}
       />
-      <ImportColumns preview={preview} onChange={(mapping) => onChange({ mapping })} />
-      <ImportRows rows={preview.rows} />
+      {commitError ? <Notice tone="stop">{commitError}</Notice> : null}
     </View>
   );
 }
@@ -109,5 +129,5 @@ const styles = StyleSheet.create({
   questions: { gap: space.m, borderLeftWidth: 8, borderLeftColor: color.warn, paddingLeft: space.m },
   counts: { flexDirection: 'row', flexWrap: 'wrap', borderBottomWidth: 3, borderBottomColor: color.ink },
   count: { flexGrow: 1, flexBasis: 130, paddingVertical: space.s },
-  figure: { fontFamily: font.figureBold, fontWeight: '700', fontSize: 42, lineHeight: 46 },
+  commit: { gap: space.s },
 });

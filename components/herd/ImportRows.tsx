@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { View } from 'react-native';
+import { StyleSheet, View } from 'react-native';
 
 import type { ImportPreview } from '@/shared/contracts/herd';
 import { t, tData } from '@/shared/messages';
@@ -15,13 +15,18 @@ type Show = 'all' | 'refuse' | 'update';
 
 const pageSize = 100;
 
-/** Every row of the file and what becomes of it; shown in parts, so that a large file stays quick. */
+/** Every row of the file and what becomes of it, a hundred at a time, so that a large file stays quick. */
 export function ImportRows({ rows }: { rows: readonly Row[] }) {
   const [show, setShow] = useState<Show>('all');
-  const [shown, setShown] = useState(pageSize);
-  const listed = rows.filter((row) => show === 'all' || row.action === show);
+  const [wantedPage, setPage] = useState(0);
+  const listed = show === 'all' ? rows : rows.filter((row) => row.action === show);
+  const last = Math.max(0, Math.ceil(listed.length / pageSize) - 1);
+  // another look at the file can leave fewer rows of a kind
+  const page = Math.min(wantedPage, last);
+  const from = page * pageSize;
+  const shown = listed.slice(from, from + pageSize);
   return (
-    <View style={{ gap: space.m }}>
+    <View style={styles.rows}>
       <Text variant="heading" level={2}>
         {t('import.rows')}
       </Text>
@@ -29,24 +34,44 @@ export function ImportRows({ rows }: { rows: readonly Row[] }) {
         label={t('import.rows')}
         hideLabel
         value={show}
-        onChange={setShow}
+        onChange={(value) => {
+          setShow(value);
+          setPage(0);
+        }}
         options={[
           { value: 'all', label: t('import.showAll') },
           { value: 'refuse', label: t('import.showRefused') },
           { value: 'update', label: t('import.showChanged') },
         ]}
       />
-      <DataTable
-        caption={t('import.rows')}
-        hideCaption
-        columns={columns}
-        rows={listed.slice(0, shown)}
-        rowKey={(row) => String(row.line)}
-      />
-      {listed.length > shown ? <Button label={t('ui.more')} onPress={() => setShown(shown + pageSize)} /> : null}
+      <Text variant="small" tone="quiet" role="status">
+        {listed.length === 0
+          ? t('import.noneOfKind')
+          : t('import.showing', { from: from + 1, to: from + shown.length, count: listed.length })}
+      </Text>
+      {shown.length > 0 ? (
+        <DataTable
+          caption={t('import.rows')}
+          hideCaption
+          columns={columns}
+          rows={shown}
+          rowKey={(row) => String(row.line)}
+        />
+      ) : null}
+      {last > 0 ? (
+        <View style={styles.turn}>
+          <Button label={t('import.earlierRows')} disabled={page === 0} onPress={() => setPage(page - 1)} />
+          <Button label={t('import.laterRows')} disabled={page === last} onPress={() => setPage(page + 1)} />
+        </View>
+      ) : null}
     </View>
   );
 }
+
+const styles = StyleSheet.create({
+  rows: { gap: space.m },
+  turn: { flexDirection: 'row', flexWrap: 'wrap', gap: space.s },
+});
 
 const fieldWord = (field: string): string => (field ? tData(`herd.${field}`, field) : '');
 

@@ -1,48 +1,23 @@
-import { useState } from 'react';
 import { View } from 'react-native';
 
-import { useImport, useImportPreview } from '@/hooks/useHerd';
+import { useMe } from '@/hooks/useMe';
 import { useOneProperty } from '@/hooks/usePlace';
-import { newId } from '@/lib/ids';
-import type { ImportRequest } from '@/shared/contracts/herd';
 import { t } from '@/shared/messages';
 import { space } from '../theme/tokens';
+import { Button } from '../ui/Button';
 import { FieldFrame } from '../ui/FieldFrame';
 import { Notice } from '../ui/Notice';
 import { Screen } from '../ui/Screen';
 import { Select } from '../ui/Select';
-import { EmptyState, failureWords, Loading } from '../ui/states';
-import { Text } from '../ui/Text';
+import { EmptyState, Loaded, Loading } from '../ui/states';
 import { ImportResult } from './ImportResult';
 import { ImportReview } from './ImportReview';
-import { readBase64 } from './readFile';
-
-const mostBytes = 4 * 1024 * 1024;
+import { useImportFile } from './useImportFile';
 
 /** Brings animals in from a CSV file: nothing is written until every row has been seen. */
 export function ImportScreen() {
+  const me = useMe();
   const { property, properties, choose } = useOneProperty('herd.import');
-  const propertyId = property?.id ?? '';
-  const preview = useImportPreview(propertyId);
-  const commit = useImport(propertyId);
-  const [request, setRequest] = useState<ImportRequest | null>(null);
-  const [tooLarge, setTooLarge] = useState(false);
-  const look = (next: ImportRequest) => {
-    setRequest(next);
-    preview.mutate(next);
-  };
-  const take = async (file: File | undefined) => {
-    if (!file) return;
-    commit.reset();
-    setTooLarge(file.size > mostBytes);
-    if (file.size > mostBytes) return;
-    look({ id: newId(), fileName: file.name, contentBase64: await readBase64(file) });
-  };
-  const error = tooLarge
-    ? t('import.tooLarge')
-    : preview.error
-      ? (fieldWords(preview.error) ?? failureWords(preview.error))
-      : undefined;
   return (
     <Screen
       title={t('import.title')}
@@ -53,55 +28,71 @@ export function ImportScreen() {
       {property ? (
         <View style={{ gap: space.l }}>
           {properties.length > 1 ? (
-            <Select
-              label={t('planner.property')}
-              value={property.id}
-              onChange={choose}
-              options={properties.map((one) => ({ value: one.id, label: one.name }))}
-            />
-          ) : null}
-          <FieldFrame
-            label={request ? t('import.another') : t('import.choose')}
-            hint={t('import.chooseHint')}
-            error={error}
-          >
-            {(control) => (
-              <input
-                {...control}
-                className="control"
-                type="file"
-                accept=".csv,.txt,.tsv,text/csv,text/plain"
-                onChange={(event) => void take(event.target.files?.[0])}
+            <View style={{ maxWidth: 360 }}>
+              <Select
+                label={t('planner.property')}
+                value={property.id}
+                onChange={choose}
+                options={properties.map((one) => ({ value: one.id, label: one.name }))}
               />
-            )}
-          </FieldFrame>
-          {preview.isPending && !preview.data ? <Loading label={t('import.reading')} /> : null}
-          {commit.data ? (
-            <ImportResult result={commit.data} />
-          ) : preview.data && request ? (
-            <ImportReview
-              preview={preview.data}
-              request={request}
-              looking={preview.isPending}
-              committing={commit.isPending}
-              onChange={(part) => look({ ...request, ...part })}
-              onCommit={() => commit.mutate(request)}
-            />
+            </View>
           ) : null}
-          {commit.error ? <Notice tone="stop">{failureWords(commit.error)}</Notice> : null}
+          {/* another property is another import: a file looked at for one is not put into the other */}
+          <ImportFile key={property.id} propertyId={property.id} />
         </View>
       ) : (
-        <EmptyState title={t('herd.empty')} next={t('server.forbidden')} />
+        <Loaded query={me}>{() => <EmptyState title={t('herd.closed')} next={t('server.forbidden')} />}</Loaded>
       )}
-      <Text variant="small" tone="quiet">
-        {t('caution.label')}
-      </Text>
     </Screen>
   );
 }
 
-/** The server's sentence for the file itself, where it could not be read. */
-function fieldWords(error: unknown): string | undefined {
-  const fields = (error as { fields?: { message: string }[] }).fields;
-  return fields?.[0]?.message;
+function ImportFile({ propertyId }: { propertyId: string }) {
+  const file = useImportFile(propertyId);
+  const { request, preview, result } = file;
+  if (result) return <ImportResult result={result} onAnother={file.forget} />;
+  return (
+    <>
+      <FieldFrame
+        label={request ? t('import.another') : t('import.choose')}
+        hint={t('import.chooseHint')}
+        error={file.fileError}
+      >
+        {(control) => (
+          <input
+            {...control}
+            className="control"
+            type="file"
+            accept=".csv,.txt,.tsv,text/csv,text/plain"
+            disabled={file.committing}
+            // the same file chosen again, once corrected, is to be read again
+            onClick={(event) => (event.currentTarget.value = '')}
+            onChange={(event) => void file.take(event.target.files?.[0])}
+          />
+        )}
+      </FieldFrame>
+      {file.reading ? <Loading label={t('import.reading')} /> : null}
+      {request && !preview && file.fileError ? <Button label={t('ui.retry')} onPress={file.lookAgain} /> : null}
+      {preview && request ? (
+        <ImportReview
+          preview={preview}
+          request={request}
+          looking={file.looking}
+          committing={file.committing}
+          lookError={file.lookError}
+          commitError={file.commitError}
+          onChange={file.change}
+          onLookAgain={file.lookAgain}
+          onCommit={file.commit}
+        />
+      ) : null}
+      {file.committing ? (
+        <View role="status">
+          <Notice tone="note" silent>
+            {t('import.committing')}
+          </Notice>
+        </View>
+      ) : null}
+    </>
+  );
 }

@@ -5,6 +5,7 @@ import type { Authority } from '@/shared/contracts/medicines';
 import type { PropertySummary } from '@/shared/contracts/people';
 import { t, tData } from '@/shared/messages';
 import { localOf } from '@/shared/when';
+import { dateWords } from '../herd/words';
 import { Button } from '../ui/Button';
 import { useNow } from '../ui/clock';
 import { Confirm } from '../ui/Dialog';
@@ -23,6 +24,10 @@ interface AuthoritiesProps {
 export function Authorities({ property, authorities, mayWithdraw }: AuthoritiesProps) {
   const [withdrawing, setWithdrawing] = useState<Authority | null>(null);
   const { withdraw } = useMedicineActions(property.id);
+  const close = () => {
+    withdraw.reset();
+    setWithdrawing(null);
+  };
   const today = localOf(useNow(), property.zone).slice(0, 10);
   if (authorities.length === 0)
     return <EmptyState title={t('medicines.noAuthorities')} next={t('medicines.noAuthoritiesHint')} />;
@@ -41,16 +46,32 @@ export function Authorities({ property, authorities, mayWithdraw }: AuthoritiesP
       <Confirm
         open={withdrawing !== null}
         danger
-        title={t('medicines.withdraw')}
+        title={
+          withdrawing
+            ? t('medicines.withdrawOf', {
+                active: tData(`active.${withdrawing.active}`, withdrawing.active),
+                head: withdrawing.head,
+              })
+            : t('medicines.withdraw')
+        }
         body={t('medicines.withdrawAsk')}
         confirmLabel={t('medicines.withdraw')}
         busy={withdraw.isPending}
         error={withdraw.error ? failureWords(withdraw.error) : undefined}
-        onClose={() => setWithdrawing(null)}
-        onConfirm={() => withdrawing && withdraw.mutate(withdrawing.id, { onSuccess: () => setWithdrawing(null) })}
+        onClose={close}
+        onConfirm={() => withdrawing && withdraw.mutate(withdrawing.id, { onSuccess: close })}
       />
     </>
   );
+}
+
+/** When it holds: withdrawn, expired, not yet, or from when until when. */
+function stateWords(authority: Authority, today: string): string {
+  const [from, to] = [dateWords(authority.validFrom), dateWords(authority.validTo)];
+  if (authority.withdrawnAt) return t('medicines.withdrawn');
+  if (authority.validTo < today) return t('medicines.expired', { day: to });
+  if (authority.validFrom > today) return t('medicines.notYet', { day: from, to });
+  return t('medicines.valid', { from, to });
 }
 
 function AuthorityRow({
@@ -63,17 +84,13 @@ function AuthorityRow({
   onWithdraw?: () => void;
 }) {
   const over = authority.validTo < today;
-  const state = authority.withdrawnAt
-    ? t('medicines.withdrawn')
-    : over
-      ? t('medicines.expired', { day: authority.validTo })
-      : t('medicines.valid', { from: authority.validFrom, to: authority.validTo });
   return (
     <RailRow
       title={`${tData(`active.${authority.active}`, authority.active)}, ${t('medicines.each', { amount: amountWords(authority.amount, authority.unit) })}`}
       subtitle={[
+        authority.product,
         authority.classes.map((c) => tData(`class.${c}`, c)).join(', '),
-        state,
+        stateWords(authority, today),
         t('medicines.by', { name: authority.issuedBy }),
         withholdWords(authority.meatDays, authority.milkHours),
         authority.directions,
@@ -87,10 +104,23 @@ function AuthorityRow({
           <Text variant="small" tone="quiet">
             {t('medicines.leftOf', { head: authority.head })}
           </Text>
+          <Text variant="small" tone="quiet">
+            {t('medicines.balance', { used: authority.used, head: authority.head })}
+          </Text>
         </>
       }
     >
-      {onWithdraw ? <Button kind="quiet" label={t('medicines.withdraw')} onPress={onWithdraw} /> : null}
+      {onWithdraw ? (
+        <Button
+          kind="quiet"
+          label={t('medicines.withdraw')}
+          accessibleLabel={t('medicines.withdrawOf', {
+            active: tData(`active.${authority.active}`, authority.active),
+            head: authority.head,
+          })}
+          onPress={onWithdraw}
+        />
+      ) : null}
     </RailRow>
   );
 }

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 
+import { useMe } from '@/hooks/useMe';
 import { useMedicines } from '@/hooks/useMedicines';
 import { useOneProperty } from '@/hooks/usePlace';
 import { t } from '@/shared/messages';
@@ -21,10 +22,11 @@ export function MedicinesScreen() {
   const [tab, setTab] = useState<Tab>('authorities');
   const query = useMedicines(property?.id ?? '');
   const may = (ability: string) => property?.abilities.some((one) => one === ability) ?? false;
+  const me = useMe();
   if (!property)
     return (
       <Screen title={t('medicines.title')}>
-        <EmptyState title={t('medicines.noAuthorities')} next={t('server.forbidden')} />
+        <Loaded query={me}>{() => <EmptyState title={t('medicines.closed')} next={t('server.forbidden')} />}</Loaded>
       </Screen>
     );
   return (

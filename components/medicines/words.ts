@@ -1,8 +1,11 @@
 import { t, tData } from '@/shared/messages';
 
+/** An amount without more than two decimals. */
+export const rounded = (amount: number): number => Math.round(amount * 100) / 100;
+
 /** `25 mg`, `1 device`. */
 export const amountWords = (amount: number, unit: string): string =>
-  `${Math.round(amount * 100) / 100} ${tData(amount === 1 ? `unit.${unit}` : `unitMany.${unit}`, tData(`unit.${unit}`, unit))}`;
+  `${rounded(amount)} ${tData(amount === 1 ? `unit.${unit}` : `unitMany.${unit}`, tData(`unit.${unit}`, unit))}`;
 
 /** `meat 1 day, milk as the label says`. */
 export const withholdWords = (meatDays: number | null, milkHours: number | null): string =>

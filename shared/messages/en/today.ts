@@ -100,5 +100,6 @@ export const today = {
   'calendar.nothing': 'Nothing planned',
   'calendar.nothingWeek': 'Nothing is planned this week.',
   'calendar.holiday': 'Holiday: {name}',
+  'calendar.holidayAt': 'Holiday at {property}: {name}',
   'calendar.weekend': 'Weekend',
 } as const;
