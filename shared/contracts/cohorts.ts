@@ -1,5 +1,6 @@
 import { z } from 'zod';
 
+import { t } from '../messages';
 import {
   active,
   administrationRoute,
@@ -121,7 +122,12 @@ export const groupInput = z.object({
   class: animalClass,
   /** Animals of the property, or else a head count alone. */
   animalIds: z.array(id).max(5000).optional(),
-  head: z.number().int().positive({ error: 'Give the number of head.' }).max(5000).optional(),
+  head: z
+    .number()
+    .int()
+    .positive({ error: t('field.head') })
+    .max(5000)
+    .optional(),
   /** The group's own anchor time; absent: the cohort's. */
   local: localDateTime.optional(),
 });

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 
+import { t } from '../messages';
 import { actives, animalClasses, doseUnits, routes, stepKinds } from '@/protocols/types';
 
 /** Client-made or server-made id. A repeated write with the same id is recognised. */
@@ -10,19 +11,26 @@ export const localDate = z.iso.date();
 /** Wall-clock date and time in the property's zone, `YYYY-MM-DDTHH:MM`. */
 export const localDateTime = z
   .string()
-  .regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}$/, { error: 'Give a date and time as YYYY-MM-DDTHH:MM.' })
-  .refine(isOnTheCalendar, { error: 'There is no such date or time.' });
+  .regex(/^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}$/, { error: t('field.dateTime') })
+  .refine(isOnTheCalendar, { error: t('field.noSuchTime') });
 
 /** Hours past 23, a 31 February: written rightly and still no time. The zone's own gaps are another matter. */
 function isOnTheCalendar(local: string): boolean {
   const at = new Date(`${local}:00Z`);
   return !Number.isNaN(at.getTime()) && at.toISOString().startsWith(local) && local >= '1900';
 }
-export const clockTime = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, { error: 'Give a time as HH:MM.' });
-export const name = z.string().trim().min(1, { error: 'Fill this in.' }).max(120, { error: 'At most 120 characters.' });
-export const note = z.string().trim().max(2000, { error: 'At most 2000 characters.' });
+export const clockTime = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, { error: t('field.clock') });
+export const name = z
+  .string()
+  .trim()
+  .min(1, { error: t('field.empty') })
+  .max(120, { error: t('field.most120') });
+export const note = z
+  .string()
+  .trim()
+  .max(2000, { error: t('field.most2000') });
 export const email = z
-  .email({ error: 'Give an e-mail address such as name@example.org.' })
+  .email({ error: t('field.email') })
   .max(254)
   .transform((v) => v.toLowerCase());
 export const animalClass = z.enum(animalClasses);

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 
+import { t } from '../messages';
 import { animalClass, id, instant, localDate, note, pageQuery } from './common';
 
 export const animal = z.object({
@@ -77,7 +78,7 @@ export const importRequest = z.object({
   id,
   fileName: z.string().max(200),
   /** The file's bytes; encoding, byte-order mark and delimiter are found by the server. At most 4 MB. */
-  contentBase64: z.base64().max(6_000_000, { error: 'The file is larger than 4 MB.' }),
+  contentBase64: z.base64().max(6_000_000, { error: t('field.file') }),
   /** Column header to field; null leaves a column out. Absent: the server proposes. */
   mapping: z.record(z.string(), importField.nullable()).optional(),
   dateOrder: dateOrder.optional(),

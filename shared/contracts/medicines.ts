@@ -1,5 +1,6 @@
 import { z } from 'zod';
 
+import { t } from '../messages';
 import { active, administrationRoute, animalClass, doseUnit, id, instant, localDate, name, note } from './common';
 
 export const product = z.object({
@@ -33,7 +34,7 @@ export const productBatchCreate = z.object({
   productId: id,
   number: name,
   expiry: localDate,
-  quantity: z.number().positive({ error: 'Give an amount above 0.' }),
+  quantity: z.number().positive({ error: t('field.amount') }),
 });
 
 /** A vet's written direction: what, how much, for how many of which class, valid until. */
@@ -65,11 +66,15 @@ export const authorityCreate = z.object({
   id,
   active,
   productId: id.nullish(),
-  amount: z.number().positive({ error: 'Give the dose per head.' }),
+  amount: z.number().positive({ error: t('field.dose') }),
   unit: doseUnit,
   route: administrationRoute,
-  classes: z.array(animalClass).min(1, { error: 'Choose at least one class.' }),
-  head: z.number().int().positive({ error: 'Give the number of head.' }).max(100000),
+  classes: z.array(animalClass).min(1, { error: t('field.classes') }),
+  head: z
+    .number()
+    .int()
+    .positive({ error: t('field.head') })
+    .max(100000),
   validFrom: localDate,
   validTo: localDate,
   meatDays: z.number().min(0).max(400).nullish(),

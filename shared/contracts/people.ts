@@ -1,15 +1,22 @@
 import { z } from 'zod';
 
+import { t } from '../messages';
 import { roles } from '../abilities';
 import { clockTime, email, id, instant, name } from './common';
 
 export const role = z.enum(roles);
 export const password = z
   .string()
-  .min(12, { error: 'Use at least 12 characters.' })
-  .max(200, { error: 'At most 200 characters.' });
+  .min(12, { error: t('field.passwordShort') })
+  .max(200, { error: t('field.most200') });
 
-export const signIn = z.object({ email, password: z.string().min(1, { error: 'Fill in your password.' }).max(200) });
+export const signIn = z.object({
+  email,
+  password: z
+    .string()
+    .min(1, { error: t('field.password') })
+    .max(200),
+});
 
 export const preferences = z.object({
   evening: z.boolean(),

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 
+import { t } from '../messages';
 import { animalClasses, type ProtocolBody } from '@/protocols/types';
 import {
   active,
@@ -18,7 +19,7 @@ const key = z
   .string()
   .min(1)
   .max(60)
-  .regex(/^[A-Za-z0-9_-]+$/, { error: 'Use letters, figures, - and _ only.' });
+  .regex(/^[A-Za-z0-9_-]+$/, { error: t('field.key') });
 const text = z.string().max(1000);
 const mark = z.enum(['read', 'memory', 'derived']);
 const bound = z.number().min(-100000).max(100000);
@@ -36,7 +37,11 @@ const condition: z.ZodType = z.lazy(() =>
 
 const item = z.strictObject({
   active,
-  amount: z.number().positive({ error: 'Give an amount above 0.' }).max(100000).optional(),
+  amount: z
+    .number()
+    .positive({ error: t('field.amount') })
+    .max(100000)
+    .optional(),
   unit: doseUnit,
   per: z.enum(['head', 'kg']),
   byClass: z.partialRecord(z.enum(animalClasses), z.number().positive()).optional(),
@@ -102,7 +107,7 @@ export const protocolBody = z.strictObject({
     'presynchronised',
     'naturalService',
   ]),
-  classes: z.array(animalClass).min(1, { error: 'Choose at least one class of animal.' }),
+  classes: z.array(animalClass).min(1, { error: t('field.suits') }),
   biology: z.enum(['taurus', 'indicus', 'any']),
   options: z
     .array(

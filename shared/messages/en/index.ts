@@ -1,5 +1,6 @@
 import { cohorts } from './cohorts';
 import { common } from './common';
+import { fields } from './fields';
 import { findings } from './findings';
 import { herd } from './herd';
 import { http } from './http';
@@ -17,6 +18,7 @@ export const en = {
   ...common,
   ...trade,
   ...findings,
+  ...fields,
   ...people,
   ...protocols,
   ...herd,

@@ -1,0 +1,20 @@
+/** What is wrong with a field, said by the contracts. */
+export const fields = {
+  'field.head': 'Give the number of head.',
+  'field.dateTime': 'Give a date and time as YYYY-MM-DDTHH:MM.',
+  'field.noSuchTime': 'There is no such date or time.',
+  'field.clock': 'Give a time as HH:MM.',
+  'field.most120': 'At most 120 characters.',
+  'field.empty': 'Fill this in.',
+  'field.most2000': 'At most 2000 characters.',
+  'field.email': 'Give an e-mail address such as name@example.org.',
+  'field.file': 'The file is larger than 4 MB.',
+  'field.amount': 'Give an amount above 0.',
+  'field.dose': 'Give the dose per head.',
+  'field.classes': 'Choose at least one class.',
+  'field.most200': 'At most 200 characters.',
+  'field.password': 'Fill in your password.',
+  'field.passwordShort': 'Use at least 12 characters.',
+  'field.suits': 'Choose at least one class of animal.',
+  'field.key': 'Use letters, figures, - and _ only.',
+} as const;
