@@ -22,6 +22,9 @@ export const useTaskWork = (taskId: string) =>
     queryKey: keys.taskWork(taskId),
     queryFn: () => call('GET /api/tasks/:taskId/work', { params: { taskId } }),
     refetchInterval: 30_000,
+    // what a reload brings back from the device may be older than what was recorded since: always ask again
+    refetchOnMount: 'always',
+    staleTime: 0,
   });
 
 const none: OutboxEntry[] = [];

@@ -9,6 +9,8 @@ export const useToday = (propertyId: string | null) =>
     queryKey: keys.today(propertyId),
     queryFn: () => call('GET /api/today', { query: propertyId ? { propertyId } : {} }),
     refetchInterval: 60_000,
+    refetchOnMount: 'always',
+    staleTime: 0,
   });
 
 /** Tasks and holidays between two local dates, both included. */
